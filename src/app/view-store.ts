@@ -1,0 +1,34 @@
+// Owns what the person looks at: selection, theme, tool, field shown, sheet view, readings shown. Never part of the job.
+// Must not know React components or workers.
+import type { FieldView } from '../../workers/protocol.ts';
+import type { PartKind } from '../model/job.ts';
+
+export type Tool =
+  | { readonly kind: 'select' }
+  | { readonly kind: 'draw'; readonly part: PartKind }
+  | { readonly kind: 'place'; readonly thing: 'probe' | 'line current' };
+
+export interface ViewState {
+  readonly theme: 'light' | 'dark';
+  readonly selection: readonly string[];
+  /** Id under the pointer, in the Brief or on the sheet: both places light up. */
+  readonly hovered: string | null;
+  readonly tool: Tool;
+  readonly field: FieldView;
+  /** Field drawn over or under the drawing, or not at all. */
+  readonly fieldPlace: 'under' | 'over' | 'off';
+  /** Linear colour scale in V/m or A/m at full colour; null follows the peak. Magnitudes in dB use `decibelSpan`. */
+  readonly fieldScale: number | null;
+  readonly decibelSpan: number;
+  /** Material new parts get. */
+  readonly paint: string;
+  setTheme(theme: 'light' | 'dark'): void;
+  select(ids: readonly string[]): void;
+  hover(id: string | null): void;
+  setTool(tool: Tool): void;
+  setField(field: FieldView): void;
+  setFieldPlace(place: 'under' | 'over' | 'off'): void;
+  setFieldScale(scale: number | null): void;
+  setDecibelSpan(span: number): void;
+  setPaint(materialId: string): void;
+}
