@@ -10,8 +10,7 @@ export interface AppError {
 }
 
 export type Result<T> =
-  | { readonly ok: true; readonly value: T }
-  | { readonly ok: false; readonly errors: readonly [AppError, ...AppError[]] };
+  { readonly ok: true; readonly value: T } | { readonly ok: false; readonly errors: readonly [AppError, ...AppError[]] };
 
 export function ok<T>(value: T): Result<T> {
   return { ok: true, value };
