@@ -18,7 +18,9 @@ export async function buildKernel() {
   if (stampOnDisk() === stamp) return OUTPUT;
   const { default: asc } = await import('assemblyscript/asc');
   const files = new Map();
-  const { error, stderr } = await asc.main([relative(ROOT, ENTRY), '--baseDir', ROOT, '--outFile', 'kernel.wasm', ...FLAGS], {
+  const stderr = asc.createMemoryStream();
+  const { error } = await asc.main([relative(ROOT, ENTRY), '--baseDir', ROOT, '--outFile', 'kernel.wasm', ...FLAGS], {
+    stderr,
     writeFile: (name, contents) => files.set(name, contents),
   });
   if (error) throw new Error(`The kernel does not compile.\n${stderr.toString()}${error.message}`);
@@ -52,7 +54,9 @@ function stampOnDisk() {
   } catch {
     return null;
   }
-  const section = WebAssembly.validate(bytes) ? WebAssembly.Module.customSections(new WebAssembly.Module(bytes), 'stamp')[0] : undefined;
+  const section = WebAssembly.validate(bytes)
+    ? WebAssembly.Module.customSections(new WebAssembly.Module(bytes), 'stamp')[0]
+    : undefined;
   return section === undefined ? null : Buffer.from(section).toString();
 }
 
