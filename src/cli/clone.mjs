@@ -11,10 +11,10 @@ const OLDEST_NODE = [20, 19];
 const SOURCES = ['src', 'workers', 'public', 'index.html', 'vite.config.ts', 'package-lock.json'];
 const BUILDS = { app: [], cli: ['--mode', 'cli'] };
 
-/** What went wrong, said once and plainly; the caller prints the message without a stack. */
-class CloneError extends Error {}
+/** Something outside the program is missing or wrong; its message says what, and the stack would say nothing more. */
+export class CloneError extends Error {}
 
-/** Runs `work` and ends the process with exit code 1 and one message if the clone cannot be made ready. */
+/** Runs `work`; ends the process with exit code 1 when the clone cannot be made ready. */
 export async function orExit(work) {
   try {
     return await work();

@@ -3,6 +3,7 @@
 import { spawnSync } from 'node:child_process';
 import { existsSync, readFileSync } from 'node:fs';
 import { delimiter, join } from 'node:path';
+import { CloneError } from '../../src/cli/clone.mjs';
 
 const COMMANDS = ['chromium', 'chromium-browser', 'google-chrome', 'google-chrome-stable', 'chrome'];
 const APPLICATIONS = [
@@ -15,14 +16,14 @@ const APPLICATIONS = [
 export async function findChromium() {
   const given = process.env.CHROMIUM_PATH;
   if (given !== undefined && given !== '') {
-    if (!starts(given)) throw new Error(`CHROMIUM_PATH=${given} does not start. Give the path of a Chromium, or unset it.`);
+    if (!starts(given)) throw new CloneError(`CHROMIUM_PATH=${given} does not start. Give the path of a Chromium, or unset it.`);
     return given;
   }
   for (const find of [onSystem, playwrights, fromDebian, packaged, downloaded]) {
     const path = await find();
     if (path !== null && starts(path)) return path;
   }
-  throw new Error('No Chromium was found, and none could be installed. Install one and give its path in CHROMIUM_PATH.');
+  throw new CloneError('No Chromium was found, and none could be installed. Install one and give its path in CHROMIUM_PATH.');
 }
 
 function onSystem() {
