@@ -1,0 +1,39 @@
+// Owns the page's side of a worker session: every call ends, even when the worker has died.
+// Must not know React or stores.
+import { wrap, type Remote } from 'comlink';
+import type { SessionApi } from './protocol.ts';
+
+export interface SpawnedSession {
+  readonly api: SessionApi;
+  /** Ends the worker; calls under way and later ones are rejected. */
+  close(): void;
+}
+
+const METHODS = ['open', 'start', 'hold', 'stepOnce', 'rewind', 'stop', 'setPace', 'poll', 'record'] as const;
+
+/** Starts a worker. Comlink promises hang for ever when a worker dies, so each call races with its death. */
+export function spawnSession(): SpawnedSession {
+  const worker = new Worker(new URL('./session.worker.ts', import.meta.url), { type: 'module' });
+  const remote: Remote<SessionApi> = wrap<SessionApi>(worker);
+  let die: (reason: Error) => void = () => undefined;
+  const death = new Promise<never>((_, reject) => (die = reject));
+  death.catch(() => undefined);
+  worker.onerror = (event) => {
+    worker.terminate();
+    die(new Error(`The solver broke: ${event.message || 'its worker could not be started'}.`));
+  };
+  worker.onmessageerror = () => die(new Error('An answer of the solver could not be read.'));
+  const guarded = Object.fromEntries(
+    METHODS.map((name) => [
+      name,
+      (...args: unknown[]) => Promise.race([(remote[name] as unknown as (...a: unknown[]) => Promise<unknown>)(...args), death]),
+    ]),
+  );
+  return {
+    api: guarded as unknown as SessionApi,
+    close() {
+      worker.terminate();
+      die(new Error('The run was closed.'));
+    },
+  };
+}

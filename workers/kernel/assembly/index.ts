@@ -1,0 +1,453 @@
+// Owns the time stepping of a run: one pass a row over the memory image described in src/engine/layout.ts.
+// Must not know what the numbers mean: polarisation, materials, absorbers and metrics are coefficients.
+//
+// Order of the float32 operations of a row (the TypeScript twin does the same, bit for bit):
+//   u'  = au*u + bu*((vyRight - vy) - (vxAbove - vx))
+//   vx' = avx*vx - bvx*(u' - u'Below)
+//   vy' = avy*vy + bvy*(u' - u'Left)
+import {
+  H_CHANNELS,
+  H_LINES,
+  H_LINE_TABLE,
+  H_RECORD,
+  H_ROWS,
+  H_ROW_TABLE,
+  H_SOURCES,
+  H_SOURCE_TABLE,
+  H_STRIDE,
+  H_U,
+  H_VX,
+  H_VY,
+  H_WRAP_Y,
+  LINE_A,
+  LINE_B,
+  LINE_BU,
+  LINE_BVX,
+  LINE_BVY,
+  LINE_FED,
+  LINE_FEED,
+  LINE_LENGTH,
+  LINE_MX,
+  LINE_MY,
+  LINE_U,
+  LINE_VX,
+  LINE_VY,
+  LINE_WORDS,
+  LOSSLESS,
+  LOSSY,
+  PLAIN,
+  POINT_COLUMN,
+  POINT_FIELD,
+  POINT_FROM_TABLE,
+  POINT_SOURCE,
+  POINT_WEIGHT,
+  POINT_WORDS,
+  SPAN_ABSORB_X,
+  SPAN_BU,
+  SPAN_BVX,
+  SPAN_BVY,
+  SPAN_COEFFICIENTS,
+  SPAN_COLUMN,
+  SPAN_COUNT,
+  SPAN_KIND,
+  SPAN_POINTS,
+  SPAN_PSI_X,
+  SPAN_PSI_Y,
+  SPAN_U_POINTS,
+  SPAN_V_POINTS,
+  SPAN_WORDS,
+  SPAN_Y_BU,
+  SPAN_Y_BV,
+  SPAN_Y_CU,
+  SPAN_Y_CV,
+  TAP_CHANNEL,
+  TAP_COLUMN,
+  TAP_FIELD,
+  TAP_WEIGHT,
+  TAP_WORDS,
+  WORKED,
+  WRAP_A,
+  WRAP_B,
+  WRAP_FIRST,
+  WRAP_LAST,
+  WRAP_WORDS,
+} from '../../../src/engine/layout';
+
+// @ts-ignore: decorator
+@inline function word(at: usize, index: i32): i32 {
+  return load<i32>(at + (<usize>index << 2));
+}
+// @ts-ignore: decorator
+@inline function offset(at: usize, index: i32): usize {
+  return <usize>load<u32>(at + (<usize>index << 2));
+}
+// @ts-ignore: decorator
+@inline function single(at: usize, index: i32): f32 {
+  return load<f32>(at + (<usize>index << 2));
+}
+// @ts-ignore: decorator
+@inline function splat(at: usize, index: i32): v128 {
+  return f32x4.splat(load<f32>(at + (<usize>index << 2)));
+}
+
+// Four cells of a plain span; returns the new u so that the next four find their left neighbour in a register.
+// @ts-ignore: decorator
+@inline function plainFour(u: usize, vx: usize, vy: usize, row: usize, bu: v128, bvx: v128, bvy: v128, left: v128): v128 {
+  const oldVx = v128.load(vx);
+  const oldVy = v128.load(vy);
+  const next = f32x4.add(
+    v128.load(u),
+    f32x4.mul(bu, f32x4.sub(f32x4.sub(v128.load(vy, 4), oldVy), f32x4.sub(v128.load(vx + row), oldVx))),
+  );
+  v128.store(u, next);
+  v128.store(vx, f32x4.sub(oldVx, f32x4.mul(bvx, f32x4.sub(next, v128.load(u - row)))));
+  v128.store(vy, f32x4.add(oldVy, f32x4.mul(bvy, f32x4.sub(next, v128.shuffle<f32>(left, next, 3, 4, 5, 6)))));
+  return next;
+}
+
+function plainSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, bu: v128, bvx: v128, bvy: v128): void {
+  let left = v128.load(u - 16);
+  let end = u + (bytes & ~63);
+  while (u < end) {
+    left = plainFour(u, vx, vy, row, bu, bvx, bvy, left);
+    left = plainFour(u + 16, vx + 16, vy + 16, row, bu, bvx, bvy, left);
+    left = plainFour(u + 32, vx + 32, vy + 32, row, bu, bvx, bvy, left);
+    left = plainFour(u + 48, vx + 48, vy + 48, row, bu, bvx, bvy, left);
+    u += 64;
+    vx += 64;
+    vy += 64;
+  }
+  end = u + (bytes & 63);
+  while (u < end) {
+    left = plainFour(u, vx, vy, row, bu, bvx, bvy, left);
+    u += 16;
+    vx += 16;
+    vy += 16;
+  }
+}
+
+function losslessSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize): void {
+  let left = v128.load(u - 16);
+  const end = u + bytes;
+  const cx = bytes;
+  const cy = bytes << 1;
+  while (u < end) {
+    left = plainFour(u, vx, vy, row, v128.load(c), v128.load(c + cx), v128.load(c + cy), left);
+    u += 16;
+    vx += 16;
+    vy += 16;
+    c += 16;
+  }
+}
+
+function lossySpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize): void {
+  let left = v128.load(u - 16);
+  const end = u + bytes;
+  const n = bytes;
+  while (u < end) {
+    const oldVx = v128.load(vx);
+    const oldVy = v128.load(vy);
+    const next = f32x4.add(
+      f32x4.mul(v128.load(c + 3 * n), v128.load(u)),
+      f32x4.mul(v128.load(c), f32x4.sub(f32x4.sub(v128.load(vy, 4), oldVy), f32x4.sub(v128.load(vx + row), oldVx))),
+    );
+    v128.store(u, next);
+    v128.store(
+      vx,
+      f32x4.sub(f32x4.mul(v128.load(c + 4 * n), oldVx), f32x4.mul(v128.load(c + n), f32x4.sub(next, v128.load(u - row)))),
+    );
+    v128.store(
+      vy,
+      f32x4.add(
+        f32x4.mul(v128.load(c + 5 * n), oldVy),
+        f32x4.mul(v128.load(c + 2 * n), f32x4.sub(next, v128.shuffle<f32>(left, next, 3, 4, 5, 6))),
+      ),
+    );
+    left = next;
+    u += 16;
+    vx += 16;
+    vy += 16;
+    c += 16;
+  }
+}
+
+function points(at: usize, count: i32, base: usize, u: usize, vx: usize, vy: usize, sources: usize): void {
+  for (let k = 0; k < count; k++) {
+    const field = word(at, POINT_FIELD);
+    const target = (field == 0 ? u : field == 1 ? vx : vy) + (<usize>word(at, POINT_COLUMN) << 2);
+    const from = offset(at, POINT_SOURCE);
+    const value = word(at, POINT_FROM_TABLE) ? load<f64>(sources + (from << 3)) : load<f64>(base + from);
+    store<f32>(target, load<f32>(target) + <f32>(load<f64>(at + (<usize>POINT_WEIGHT << 2)) * value));
+    at += <usize>POINT_WORDS << 2;
+  }
+}
+
+// A span with absorber or drive terms: u, its terms, v, its terms. u, vx, vy point at the span's first column.
+function workedSpan(span: usize, base: usize, u0: usize, vx0: usize, vy0: usize, row: usize, sources: usize): void {
+  const first = <usize>word(span, SPAN_COLUMN) << 2;
+  const bytes = <usize>word(span, SPAN_COUNT) << 2;
+  const c = base + offset(span, SPAN_COEFFICIENTS);
+  const lossy = (word(span, SPAN_KIND) & 3) == LOSSY;
+  const u = u0 + first;
+  const vx = vx0 + first;
+  const vy = vy0 + first;
+  const absorbX = offset(span, SPAN_ABSORB_X);
+  const psiY = offset(span, SPAN_PSI_Y);
+  const uPoints = word(span, SPAN_U_POINTS);
+  const vPoints = word(span, SPAN_V_POINTS);
+  const pointsAt = base + offset(span, SPAN_POINTS);
+
+  for (let k: usize = 0; k < bytes; k += 16) {
+    const curl = f32x4.sub(
+      f32x4.sub(v128.load(vy + k, 4), v128.load(vy + k)),
+      f32x4.sub(v128.load(vx + k + row), v128.load(vx + k)),
+    );
+    const old = v128.load(u + k);
+    const kept = lossy ? f32x4.mul(v128.load(c + 3 * bytes + k), old) : old;
+    v128.store(u + k, f32x4.add(kept, f32x4.mul(v128.load(c + k), curl)));
+  }
+  if (absorbX) {
+    const b = base + absorbX;
+    const psi = base + offset(span, SPAN_PSI_X);
+    for (let k: usize = 0; k < bytes; k += 16) {
+      const next = f32x4.add(
+        f32x4.mul(v128.load(b + k), v128.load(psi + k)),
+        f32x4.mul(v128.load(b + bytes + k), f32x4.sub(v128.load(vy + k, 4), v128.load(vy + k))),
+      );
+      v128.store(psi + k, next);
+      v128.store(u + k, f32x4.add(v128.load(u + k), f32x4.mul(v128.load(c + k), next)));
+    }
+  }
+  if (psiY) {
+    const psi = base + psiY;
+    const b = splat(span, SPAN_Y_BU);
+    const cc = splat(span, SPAN_Y_CU);
+    for (let k: usize = 0; k < bytes; k += 16) {
+      const next = f32x4.add(
+        f32x4.mul(b, v128.load(psi + k)),
+        f32x4.mul(cc, f32x4.sub(v128.load(vx + k + row), v128.load(vx + k))),
+      );
+      v128.store(psi + k, next);
+      v128.store(u + k, f32x4.sub(v128.load(u + k), f32x4.mul(v128.load(c + k), next)));
+    }
+  }
+  points(pointsAt, uPoints, base, u0, vx0, vy0, sources);
+
+  for (let k: usize = 0; k < bytes; k += 16) {
+    const now = v128.load(u + k);
+    const oldVx = v128.load(vx + k);
+    const oldVy = v128.load(vy + k);
+    const keptX = lossy ? f32x4.mul(v128.load(c + 4 * bytes + k), oldVx) : oldVx;
+    const keptY = lossy ? f32x4.mul(v128.load(c + 5 * bytes + k), oldVy) : oldVy;
+    v128.store(vx + k, f32x4.sub(keptX, f32x4.mul(v128.load(c + bytes + k), f32x4.sub(now, v128.load(u + k - row)))));
+    v128.store(vy + k, f32x4.add(keptY, f32x4.mul(v128.load(c + 2 * bytes + k), f32x4.sub(now, v128.load(u + k - 4)))));
+  }
+  if (absorbX) {
+    const b = base + absorbX + 2 * bytes;
+    const psi = base + offset(span, SPAN_PSI_X) + bytes;
+    for (let k: usize = 0; k < bytes; k += 16) {
+      const next = f32x4.add(
+        f32x4.mul(v128.load(b + k), v128.load(psi + k)),
+        f32x4.mul(v128.load(b + bytes + k), f32x4.sub(v128.load(u + k), v128.load(u + k - 4))),
+      );
+      v128.store(psi + k, next);
+      v128.store(vy + k, f32x4.add(v128.load(vy + k), f32x4.mul(v128.load(c + 2 * bytes + k), next)));
+    }
+  }
+  if (psiY) {
+    const psi = base + psiY + bytes;
+    const b = splat(span, SPAN_Y_BV);
+    const cc = splat(span, SPAN_Y_CV);
+    for (let k: usize = 0; k < bytes; k += 16) {
+      const next = f32x4.add(
+        f32x4.mul(b, v128.load(psi + k)),
+        f32x4.mul(cc, f32x4.sub(v128.load(u + k), v128.load(u + k - row))),
+      );
+      v128.store(psi + k, next);
+      v128.store(vx + k, f32x4.sub(v128.load(vx + k), f32x4.mul(v128.load(c + bytes + k), next)));
+    }
+  }
+  points(pointsAt + <usize>uPoints * (<usize>POINT_WORDS << 2), vPoints, base, u0, vx0, vy0, sources);
+}
+
+// u, vx, vy point at column 0 of the row.
+function passRow(program: usize, base: usize, u: usize, vx: usize, vy: usize, row: usize, sources: usize, record: usize): void {
+  let at = program + 4;
+  for (let n = load<i32>(program); n > 0; n--) {
+    const kind = word(at, SPAN_KIND);
+    const first = <usize>word(at, SPAN_COLUMN) << 2;
+    const bytes = <usize>word(at, SPAN_COUNT) << 2;
+    if (kind == PLAIN) {
+      plainSpan(u + first, vx + first, vy + first, row, bytes, splat(at, SPAN_BU), splat(at, SPAN_BVX), splat(at, SPAN_BVY));
+    } else if (kind & WORKED) {
+      workedSpan(at, base, u, vx, vy, row, sources);
+    } else if (kind == LOSSLESS) {
+      losslessSpan(u + first, vx + first, vy + first, row, bytes, base + offset(at, SPAN_COEFFICIENTS));
+    } else {
+      lossySpan(u + first, vx + first, vy + first, row, bytes, base + offset(at, SPAN_COEFFICIENTS));
+    }
+    at += <usize>SPAN_WORDS << 2;
+  }
+  const firstColumn = <usize>word(at, WRAP_FIRST) << 2;
+  if (firstColumn) {
+    const lastColumn = <usize>word(at, WRAP_LAST) << 2;
+    const link =
+      single(at, WRAP_A) * load<f32>(vy + firstColumn) +
+      single(at, WRAP_B) * (load<f32>(u + firstColumn) - load<f32>(u + lastColumn));
+    store<f32>(vy + firstColumn, link);
+    store<f32>(vy + lastColumn + 4, link);
+  }
+  at += <usize>WRAP_WORDS << 2;
+  const taps = load<i32>(at);
+  at += 4;
+  for (let k = 0; k < taps; k++) {
+    const field = word(at, TAP_FIELD);
+    const value = load<f32>((field == 0 ? u : field == 1 ? vx : vy) + (<usize>word(at, TAP_COLUMN) << 2));
+    const slot = record + (<usize>word(at, TAP_CHANNEL) << 2);
+    store<f32>(slot, load<f32>(slot) + single(at, TAP_WEIGHT) * value);
+    at += <usize>TAP_WORDS << 2;
+  }
+}
+
+function lineU(line: usize, base: usize, step: i32): void {
+  const length = word(line, LINE_LENGTH);
+  const mx = word(line, LINE_MX);
+  const my = word(line, LINE_MY);
+  const fed = word(line, LINE_FED);
+  const u = base + offset(line, LINE_U);
+  const vx = base + offset(line, LINE_VX);
+  const vy = base + offset(line, LINE_VY);
+  const a = base + offset(line, LINE_A);
+  const b = base + offset(line, LINE_B);
+  const feed = base + offset(line, LINE_FEED) + (<usize>(step * fed) << 3);
+  const bu = load<f64>(line + (<usize>LINE_BU << 2));
+  for (let r = 0; r < fed; r++) store<f64>(u + (<usize>r << 3), load<f64>(feed + (<usize>r << 3)));
+  for (let r = fed; r < length - fed; r++) {
+    const p = <usize>r << 3;
+    const curl =
+      load<f64>(vy + (<usize>(r + mx) << 3)) - load<f64>(vy + p) - (load<f64>(vx + (<usize>(r + my) << 3)) - load<f64>(vx + p));
+    store<f64>(u + p, load<f64>(a + p) * load<f64>(u + p) + load<f64>(b + p) * bu * curl);
+  }
+}
+
+function lineV(line: usize, base: usize): void {
+  const length = word(line, LINE_LENGTH);
+  const mx = word(line, LINE_MX);
+  const my = word(line, LINE_MY);
+  const u = base + offset(line, LINE_U);
+  const vx = base + offset(line, LINE_VX);
+  const vy = base + offset(line, LINE_VY);
+  const a = base + offset(line, LINE_A);
+  const b = base + offset(line, LINE_B);
+  const bvx = load<f64>(line + (<usize>LINE_BVX << 2));
+  const bvy = load<f64>(line + (<usize>LINE_BVY << 2));
+  for (let r = max(0, my); r < length + min(0, my); r++) {
+    const p = <usize>r << 3;
+    const rise = load<f64>(u + p) - load<f64>(u + (<usize>(r - my) << 3));
+    store<f64>(vx + p, load<f64>(a + p) * load<f64>(vx + p) - load<f64>(b + p) * bvx * rise);
+  }
+  for (let r = max(0, mx); r < length + min(0, mx); r++) {
+    const p = <usize>r << 3;
+    const rise = load<f64>(u + p) - load<f64>(u + (<usize>(r - mx) << 3));
+    store<f64>(vy + p, load<f64>(a + p) * load<f64>(vy + p) + load<f64>(b + p) * bvy * rise);
+  }
+}
+
+/** Advances the image at `base` by `steps` (at most the slice); clears and fills the record, reads source and feed tables. */
+export function advance(base: usize, steps: i32): void {
+  const row = <usize>word(base, H_STRIDE) << 2;
+  const rows = word(base, H_ROWS);
+  const u = base + offset(base, H_U);
+  const vx = base + offset(base, H_VX);
+  const vy = base + offset(base, H_VY);
+  const table = base + offset(base, H_ROW_TABLE);
+  const channels = <usize>word(base, H_CHANNELS) << 2;
+  const sourceBytes = <usize>word(base, H_SOURCES) << 3;
+  const lines = word(base, H_LINES);
+  const lineTable = base + offset(base, H_LINE_TABLE);
+  const wrapY = word(base, H_WRAP_Y);
+  let record = base + offset(base, H_RECORD);
+  let sources = base + offset(base, H_SOURCE_TABLE);
+  for (let step = 0; step < steps; step++) {
+    memory.fill(record, 0, channels);
+    for (let k = 0; k < lines; k++) lineU(lineTable + <usize>k * (<usize>LINE_WORDS << 2), base, step);
+    for (let j = 1; j <= rows; j++) {
+      const at = <usize>j * row;
+      // The link below the first row is the one above the last: the ghost row carries it.
+      if (wrapY && j == rows) memory.copy(u + at, u + row, row);
+      passRow(base + offset(table, j), base, u + at, vx + at, vy + at, row, sources, record);
+      if (wrapY && j == rows) memory.copy(vx + row, vx + at, row);
+    }
+    for (let k = 0; k < lines; k++) lineV(lineTable + <usize>k * (<usize>LINE_WORDS << 2), base);
+    record += channels;
+    sources += sourceBytes;
+  }
+}
+
+// Energy of one cell: u^2/bu + vx(-)vx(+)/bvx + vy(-)vy(+)/bvy, conserved exactly by the lossless update.
+// @ts-ignore: decorator
+@inline function cellEnergy(u: usize, vx: usize, vy: usize, row: usize, bu: f64, bvx: f64, bvy: f64): f64 {
+  const here = <f64>load<f32>(u);
+  const x = <f64>load<f32>(vx);
+  const y = <f64>load<f32>(vy);
+  let sum = 0.0;
+  if (bu > 0) sum += (here * here) / bu;
+  if (bvx > 0) sum += x * (x / bvx + (here - <f64>load<f32>(u - row)));
+  if (bvy > 0) sum += y * (y / bvy - (here - <f64>load<f32>(u - 4)));
+  return sum;
+}
+
+/**
+ * Discrete energy of the image at `base` in kernel units, double precision: the leapfrog invariant
+ * sum(u^n u^n / bu) + sum(v^(n-1/2) v^(n+1/2) / bv), with v^(n-1/2) found from the last update.
+ */
+export function energy(base: usize): f64 {
+  const row = <usize>word(base, H_STRIDE) << 2;
+  const rows = word(base, H_ROWS);
+  const u0 = base + offset(base, H_U);
+  const vx0 = base + offset(base, H_VX);
+  const vy0 = base + offset(base, H_VY);
+  const table = base + offset(base, H_ROW_TABLE);
+  let total = 0.0;
+  for (let j = 1; j <= rows; j++) {
+    const program = base + offset(table, j);
+    let at = program + 4;
+    let sum = 0.0;
+    for (let n = load<i32>(program); n > 0; n--) {
+      const first = (<usize>word(at, SPAN_COLUMN) << 2) + <usize>j * row;
+      const bytes = <usize>word(at, SPAN_COUNT) << 2;
+      if (word(at, SPAN_KIND) == PLAIN) {
+        const bu = <f64>single(at, SPAN_BU);
+        const bvx = <f64>single(at, SPAN_BVX);
+        const bvy = <f64>single(at, SPAN_BVY);
+        for (let k = first; k < first + bytes; k += 4) sum += cellEnergy(u0 + k, vx0 + k, vy0 + k, row, bu, bvx, bvy);
+      } else {
+        const c = base + offset(at, SPAN_COEFFICIENTS);
+        for (let k: usize = 0; k < bytes; k += 4) {
+          const p = first + k;
+          sum += cellEnergy(
+            u0 + p,
+            vx0 + p,
+            vy0 + p,
+            row,
+            <f64>load<f32>(c + k),
+            <f64>load<f32>(c + bytes + k),
+            <f64>load<f32>(c + 2 * bytes + k),
+          );
+        }
+      }
+      at += <usize>SPAN_WORDS << 2;
+    }
+    const firstColumn = <usize>word(at, WRAP_FIRST) << 2;
+    if (firstColumn) {
+      const lastColumn = <usize>word(at, WRAP_LAST) << 2;
+      const p = <usize>j * row;
+      const y = <f64>load<f32>(vy0 + p + firstColumn);
+      const rise = <f64>load<f32>(u0 + p + firstColumn) - <f64>load<f32>(u0 + p + lastColumn);
+      const b = <f64>single(at, WRAP_B);
+      if (b > 0) sum += y * (y / b - rise);
+    }
+    total += sum;
+  }
+  return total;
+}

@@ -1,0 +1,160 @@
+// Owns one run in memory: a plan's image in a kernel, stepped slice by slice, with its records and spectra.
+// Must not know workers, messages, clocks or pages.
+import type { Result } from '../src/base/result.ts';
+import { fail, ok } from '../src/base/result.ts';
+import { feedInto } from '../src/engine/plane-wave.ts';
+import type { RunPlan } from '../src/engine/plan.ts';
+import { RunningDft } from '../src/engine/spectrum.ts';
+import { waveformAt } from '../src/engine/waveform.ts';
+
+interface KernelExports {
+  advance(base: number, steps: number): void;
+  energy(base: number): number;
+}
+
+const PAGE = 65536;
+/** The image begins one page in: the kernel keeps its own few words below. */
+const BASE = PAGE;
+
+/** A run at t = 0. Fails when the memory cannot be had. */
+export async function openRun(plan: RunPlan, kernel: WebAssembly.Module): Promise<Result<Run>> {
+  let memory: WebAssembly.Memory;
+  try {
+    memory = new WebAssembly.Memory({ initial: 1 + Math.ceil(plan.imageBytes / PAGE) });
+  } catch {
+    return fail({
+      code: 'no memory',
+      path: 'grid.cells',
+      message: `The ${(plan.imageBytes / 2 ** 20).toFixed(0)} MB of this job could not be had from the machine.`,
+      hint: 'Close other pages, or take larger cells.',
+    });
+  }
+  const instance = await WebAssembly.instantiate(kernel, { env: { memory } });
+  return ok(new Run(plan, memory.buffer, instance.exports as unknown as KernelExports));
+}
+
+export class Run {
+  readonly plan: RunPlan;
+  /** The whole image as float32, offset 0 being its start. */
+  readonly image: Float32Array<ArrayBuffer>;
+  /** Steps done. u stands at step * dt, in-plane fields half a step later. */
+  step = 0;
+  /** Samples per channel, index n at time n * dt; in-plane channels aligned to u by the mean of the half steps round it. */
+  private traces: Float32Array<ArrayBuffer>[];
+  private readonly kernel: KernelExports;
+  private readonly buffer: ArrayBuffer;
+  private dft: RunningDft;
+  private driveDft: RunningDft;
+
+  constructor(plan: RunPlan, buffer: ArrayBuffer, kernel: KernelExports) {
+    this.plan = plan;
+    this.kernel = kernel;
+    this.buffer = buffer;
+    this.image = new Float32Array(buffer, BASE, Math.floor(plan.imageBytes / 4));
+    this.traces = [];
+    this.dft = this.makeDft();
+    this.driveDft = this.makeDriveDft();
+    this.rewind();
+  }
+
+  /** Back to t = 0. */
+  rewind(): void {
+    const { plan, buffer } = this;
+    new Uint8Array(buffer, BASE, plan.fixedOffset).fill(0);
+    new Int32Array(buffer, BASE, plan.header.length).set(plan.header);
+    new Uint8Array(buffer, BASE + plan.fixedOffset, plan.fixed.byteLength).set(new Uint8Array(plan.fixed));
+    this.step = 0;
+    this.traces = Array.from({ length: 3 * plan.probeIds.length }, () => new Float32Array(1024));
+    this.dft = this.makeDft();
+    this.driveDft = this.makeDriveDft();
+  }
+
+  /** Does `steps` steps (at most the plan's slice) and records them. */
+  advance(steps: number): void {
+    const { plan, buffer } = this;
+    const { sources, feeds, dtSeconds } = plan;
+    const table = new Float64Array(buffer, BASE + plan.sourceTableOffset, plan.slice * Math.max(1, sources.length));
+    for (let s = 0; s < steps; s++) {
+      const t = (this.step + 1 + s) * dtSeconds;
+      // A current acts between the two values of u it changes.
+      sources.forEach((waveform, k) => (table[s * sources.length + k] = waveformAt(waveform, t - dtSeconds / 2)));
+    }
+    for (const feed of feeds) {
+      const values = new Float64Array(buffer, BASE + feed.tableOffset, plan.slice * feed.fed);
+      for (let s = 0; s < steps; s++) feedInto(values, s * feed.fed, feed, (this.step + 1 + s) * dtSeconds);
+    }
+    this.kernel.advance(BASE, steps);
+    this.record(steps);
+    this.step += steps;
+  }
+
+  /** Discrete energy in kernel units; only ratios mean anything. */
+  energy(): number {
+    return this.kernel.energy(BASE);
+  }
+
+  /** Samples `from` to the last of one channel (a copy). */
+  traceFrom(channel: number, from: number): Float32Array<ArrayBuffer> {
+    return this.traces[channel]!.slice(Math.min(from, this.step + 1), this.step + 1);
+  }
+
+  spectrum(channel: number): { re: Float64Array<ArrayBuffer>; im: Float64Array<ArrayBuffer> } {
+    return this.dft.channel(channel);
+  }
+
+  driveSpectrum(): { re: Float64Array<ArrayBuffer>; im: Float64Array<ArrayBuffer> } {
+    return this.driveDft.channel(0);
+  }
+
+  /** First place where u is not a finite number, in unknowns of the grid, or null. */
+  firstNotFinite(): { i: number; j: number } | null {
+    const { fields } = this.plan;
+    for (let j = 0; j < fields.countY; j++) {
+      const row = (fields.uOffset >> 2) + (j + 1) * fields.stride + 4;
+      for (let i = 0; i < fields.countX; i++) if (!Number.isFinite(this.image[row + i]!)) return { i, j };
+    }
+    return null;
+  }
+
+  private makeDft(): RunningDft {
+    const { plan } = this;
+    const offsets = plan.probeIds.flatMap(() => [0, 0.5, 0.5]);
+    return new RunningDft(plan.frequenciesHertz, plan.dtSeconds, offsets);
+  }
+
+  private makeDriveDft(): RunningDft {
+    return new RunningDft(this.plan.frequenciesHertz, this.plan.dtSeconds, [0]);
+  }
+
+  private record(steps: number): void {
+    const { plan } = this;
+    const channels = 3 * plan.probeIds.length;
+    const block = this.image.subarray(plan.recordOffset >> 2, (plan.recordOffset >> 2) + steps * channels);
+    const first = this.step + 1;
+    for (let c = 0; c < channels; c++) {
+      const trace = this.roomFor(c, first + steps);
+      const half = c % 3 !== 0;
+      for (let s = 0; s < steps; s++) {
+        const raw = block[s * channels + c]!;
+        // Between slices the last half-step value waits one place ahead of the aligned ones.
+        trace[first + s] = half ? (trace[first + s]! + raw) / 2 : raw;
+        if (half) trace[first + s + 1] = raw;
+      }
+    }
+    this.dft.add(block, first, steps);
+    if (plan.driveWaveform !== null) {
+      const drive = new Float32Array(steps);
+      for (let s = 0; s < steps; s++) drive[s] = waveformAt(plan.driveWaveform, (first + s) * plan.dtSeconds);
+      this.driveDft.add(drive, first, steps);
+    }
+  }
+
+  private roomFor(channel: number, lastStep: number): Float32Array<ArrayBuffer> {
+    const trace = this.traces[channel]!;
+    if (trace.length > lastStep + 1) return trace;
+    const grown = new Float32Array(2 * lastStep + 2);
+    grown.set(trace);
+    this.traces[channel] = grown;
+    return grown;
+  }
+}
