@@ -207,7 +207,12 @@ export type ResolvedDrive =
 /** The job in SI numbers. Everything the engine may know of it. */
 export interface ResolvedJob {
   readonly section: Section;
-  readonly band: { readonly fromHertz: number; readonly toHertz: number; readonly points: number; readonly listedHertz: readonly number[] };
+  readonly band: {
+    readonly fromHertz: number;
+    readonly toHertz: number;
+    readonly points: number;
+    readonly listedHertz: readonly number[];
+  };
   readonly sheet: {
     readonly widthMetres: number;
     readonly heightMetres: number;
