@@ -1,14 +1,17 @@
 // Owns the job being edited, its history, and the one door through which it changes.
 // Must not know React components or workers.
+import { create } from 'zustand';
 import type { AppError, Result } from '../base/result.ts';
 import type { Command } from '../model/commands.ts';
+import { applyCommand } from '../model/commands.ts';
+import { describeCommand } from '../model/describe-command.ts';
+import type { History, HistoryMove, HistoryPolicy } from '../model/history.ts';
+import { bailOut, makeHistory, recordEdit, redoEdit, redoLabel, undoEdit, undoLabel } from '../model/history.ts';
 import type { Job, ResolvedJob } from '../model/job.ts';
+import { makeEmptyJob } from '../model/new-job.ts';
+import { resolveJob } from '../model/resolve-job.ts';
 
-/**
- * record: its own undo step. join: merges with the step before when that has the same key (a drag, a spin).
- * skip: not undoable (loading at start).
- */
-export type HistoryPolicy = { readonly kind: 'record' } | { readonly kind: 'join'; readonly key: string } | { readonly kind: 'skip' };
+export type { HistoryPolicy } from '../model/history.ts';
 
 export interface JobState {
   readonly job: Job;
@@ -29,3 +32,49 @@ export interface JobState {
   bail(key: string): void;
   dismissRefusal(): void;
 }
+
+type Shown = Pick<JobState, 'canUndo' | 'canRedo' | 'undoLabel' | 'redoLabel'>;
+
+function showHistory(history: History): Shown {
+  return {
+    canUndo: history.past.length > 0,
+    canRedo: history.future.length > 0,
+    undoLabel: undoLabel(history),
+    redoLabel: redoLabel(history),
+  };
+}
+
+export const useJobStore = create<JobState>()((set, get) => {
+  let history = makeHistory();
+
+  /** The only place where the job is put. */
+  const show = (job: Job, next: History): void => {
+    history = next;
+    const resolved = job === get().job ? get().resolved : resolveJob(job);
+    set({ job, resolved, refusal: null, ...showHistory(next) });
+  };
+  const follow = (move: HistoryMove | null): void => {
+    if (move !== null) show(move.job, move.history);
+  };
+
+  const job = makeEmptyJob();
+  return {
+    job,
+    resolved: resolveJob(job),
+    ...showHistory(history),
+    saved: 'saved',
+    refusal: null,
+    dispatch: (command, policy = { kind: 'record' }) => {
+      const before = get().job;
+      const applied = applyCommand(before, command);
+      if (!applied.ok) set({ refusal: applied.errors[0] });
+      else if (applied.value === before) set({ refusal: null });
+      else show(applied.value, recordEdit(history, before, describeCommand(before, command), policy));
+      return applied;
+    },
+    undo: () => follow(undoEdit(history, get().job)),
+    redo: () => follow(redoEdit(history, get().job)),
+    bail: (key) => follow(bailOut(history, key)),
+    dismissRefusal: () => set({ refusal: null }),
+  };
+});

@@ -1,5 +1,6 @@
 // Owns the state of the run shown: progress, live traces, finished records, and the run book.
 // Must not know React components or the worker client (the run controller feeds this store).
+import { create } from 'zustand';
 import type { FieldComponent, ProbeTrace, RunProgress, RunRecord } from '../../workers/protocol.ts';
 import type { AppError } from '../base/result.ts';
 import type { Estimate } from '../engine/estimate.ts';
@@ -54,3 +55,30 @@ export interface RunActions {
   /** Puts the kept run's job back on the sheet (undoable) and its readings on show. */
   reopenKept(id: string): void;
 }
+
+export const NO_PROGRESS: RunProgress = {
+  state: 'ready',
+  step: 0,
+  stepLimit: 0,
+  timeSeconds: 0,
+  energyDb: 0,
+  megaCellsPerSecond: 0,
+  secondsLeft: 0,
+  stopReason: null,
+  trouble: null,
+};
+
+export const useRunStore = create<RunState>()(() => ({
+  progress: NO_PROGRESS,
+  estimate: null,
+  errors: [],
+  stale: false,
+  components: null,
+  liveTraces: [],
+  liveCount: 0,
+  main: null,
+  reference: null,
+  referenceState: 'none',
+  answeredJob: null,
+  kept: [],
+}));

@@ -1,5 +1,6 @@
 // Owns what the person looks at: selection, theme, tool, field shown, sheet view, readings shown. Never part of the job.
 // Must not know React components or workers.
+import { create } from 'zustand';
 import type { FieldView } from '../../workers/protocol.ts';
 import type { PartKind } from '../model/job.ts';
 
@@ -32,3 +33,41 @@ export interface ViewState {
   setDecibelSpan(span: number): void;
   setPaint(materialId: string): void;
 }
+
+const THEME_KEY = 'guidewall theme';
+
+/** Nothing here needs a browser: without one (tests) the theme is light and is not remembered. */
+function readTheme(): ViewState['theme'] {
+  const kept = globalThis.localStorage?.getItem(THEME_KEY);
+  if (kept === 'light' || kept === 'dark') return kept;
+  return globalThis.matchMedia?.('(prefers-color-scheme: dark)').matches ? 'dark' : 'light';
+}
+
+function sameIds(a: readonly string[], b: readonly string[]): boolean {
+  return a.length === b.length && a.every((id, k) => id === b[k]);
+}
+
+export const useViewStore = create<ViewState>()((set) => ({
+  theme: readTheme(),
+  selection: [],
+  hovered: null,
+  tool: { kind: 'select' },
+  field: 'Ez',
+  fieldPlace: 'under',
+  fieldScale: null,
+  decibelSpan: 60,
+  paint: 'perfect-metal',
+  setTheme: (theme) => {
+    globalThis.localStorage?.setItem(THEME_KEY, theme);
+    set({ theme });
+  },
+  // Same ids, same array: whoever draws the selection is not woken for nothing.
+  select: (ids) => set((state) => (sameIds(state.selection, ids) ? state : { selection: ids })),
+  hover: (id) => set((state) => (state.hovered === id ? state : { hovered: id })),
+  setTool: (tool) => set({ tool }),
+  setField: (field) => set({ field }),
+  setFieldPlace: (fieldPlace) => set({ fieldPlace }),
+  setFieldScale: (fieldScale) => set({ fieldScale }),
+  setDecibelSpan: (decibelSpan) => set({ decibelSpan }),
+  setPaint: (paint) => set({ paint }),
+}));

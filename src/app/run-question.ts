@@ -1,0 +1,44 @@
+// Owns when two jobs ask the same question of the solver, and when a reference run is worth its time.
+// Must not know stores, workers, or how a run is made.
+import type { Estimate } from '../engine/estimate.ts';
+import type { Job, ResolvedJob } from '../model/job.ts';
+
+/** True when nothing but title and notes differs. Edits share what they leave alone, so identity mostly tells. */
+export function asksTheSame(a: Job, b: Job): boolean {
+  if (a === b) return true;
+  const keys = Object.keys(a) as (keyof Job)[];
+  const same = (key: keyof Job): boolean => a[key] === b[key] || JSON.stringify(a[key]) === JSON.stringify(b[key]);
+  return keys.every((key) => key === 'title' || key === 'notes' || same(key));
+}
+
+/** A reference run that leaves out nothing would repeat the run itself. */
+export function wantsReference(job: Job): boolean {
+  switch (job.reference) {
+    case 'none':
+      return false;
+    case 'empty sheet':
+      return job.parts.length > 0;
+    case 'without marked parts':
+      return job.parts.some((part) => part.leftOutOfReference);
+  }
+}
+
+/**
+ * Everything the reference run's numbers hang on, as text. The parts left out act through the grid and the launch alone,
+ * which the estimate states; so a wall can be moved without running the reference again.
+ */
+export function writeReferenceKey(job: ResolvedJob, estimate: Estimate): string {
+  const { cellsX, cellsY, dxMetres, dyMetres, dtSeconds, stepLimit, launch } = estimate;
+  const parts = job.reference === 'empty sheet' ? [] : job.parts.filter((part) => !part.leftOutOfReference);
+  return JSON.stringify([
+    { cellsX, cellsY, dxMetres, dyMetres, dtSeconds, stepLimit, launch },
+    job.section,
+    job.band,
+    job.sheet,
+    job.grid.absorberCells,
+    job.drives.map(({ name: _, ...drive }) => drive),
+    job.probes.map(({ id, at }) => ({ id, at })),
+    job.stop,
+    parts.map(({ outline, medium }) => ({ outline, medium })),
+  ]);
+}
