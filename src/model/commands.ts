@@ -1,7 +1,22 @@
 // Owns the edits a person can make to a job: one pure function, one door.
 // Must not know the DOM, React, stores, Node.
 import type { Result } from '../base/result.ts';
+import { ok } from '../base/result.ts';
+import {
+  duplicateThings,
+  findUnknownId,
+  insertAt,
+  moveThings,
+  putThing,
+  removeThings,
+  reorderPart,
+  setAt,
+  setSection,
+} from './edit-job.ts';
 import type { Drive, Job, OwnMaterial, Part, Probe, Quantity } from './job.ts';
+import { validateJob } from './parse-job.ts';
+import { copyPlainData } from './plain-data.ts';
+import { shareById, shareStructure } from './share-structure.ts';
 
 export type ListName = 'parts' | 'drives' | 'probes' | 'materials';
 
@@ -28,5 +43,60 @@ export type Command =
   /** Another document (opened, dropped, example). */
   | { readonly do: 'replace'; readonly job: Job };
 
-/** Applies one command; never mutates `job`. Errors name path, value and mend. */
-export declare function applyCommand(job: Job, command: Command): Result<Job>;
+/** The job after the command, before it is judged; plain data that may not be a job. */
+function edit(job: Job, command: Command): Result<unknown> {
+  switch (command.do) {
+    case 'set':
+      return command.path.length === 1 && command.path[0] === 'section'
+        ? ok(setSection(job, command.value as Job['section']))
+        : setAt(job, command.path, command.value);
+    case 'add':
+      return ok({ ...job, [command.list]: insertAt<unknown>(job[command.list], command.item, command.at) });
+    case 'remove':
+    case 'move':
+    case 'duplicate': {
+      const known = findUnknownId(job, command.ids);
+      if (!known.ok) return known;
+      if (command.do === 'remove') return removeThings(job, command.ids);
+      const { ids, dxMetres, dyMetres } = command;
+      return ok(command.do === 'move' ? moveThings(job, ids, dxMetres, dyMetres) : duplicateThings(job, ids, dxMetres, dyMetres));
+    }
+    case 'put':
+      return putThing(job, command.item);
+    case 'reorder':
+      return reorderPart(job, command.id, command.to);
+    case 'name value':
+      return setAt(job, ['values', command.name], command.value);
+    case 'unname value':
+      return setAt(job, ['values', command.name], undefined);
+    case 'set section':
+      return ok(setSection(job, command.section));
+    case 'replace':
+      return ok(command.job);
+  }
+}
+
+/** Applies one command; never mutates `job`. What the command leaves alone keeps its identity. Errors name path, value and mend. */
+export function applyCommand(job: Job, command: Command): Result<Job> {
+  const edited = edit(job, command);
+  if (!edited.ok) return edited;
+  const plain = copyPlainData(edited.value);
+  if (!plain.ok) return plain;
+  const valid = validateJob(plain.value);
+  if (!valid.ok) return valid;
+  const lists = {
+    parts: shareById(job.parts, valid.value.parts),
+    drives: shareById(job.drives, valid.value.drives),
+    probes: shareById(job.probes, valid.value.probes),
+    materials: shareById(job.materials, valid.value.materials),
+  };
+  return ok(shareStructure(job, { ...valid.value, ...lists }));
+}
+
+/** Ids that `after` has and `before` has not: what to select after adding or duplicating. */
+export function findAddedIds(before: Job, after: Job): readonly string[] {
+  const former = new Set([...before.parts, ...before.drives, ...before.probes, ...before.materials].map((thing) => thing.id));
+  return [...after.parts, ...after.drives, ...after.probes, ...after.materials]
+    .map((thing) => thing.id)
+    .filter((id) => !former.has(id));
+}
