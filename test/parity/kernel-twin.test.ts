@@ -1,0 +1,72 @@
+// The WebAssembly kernel against its TypeScript twin: equal bits over the whole image, whatever the row holds.
+import { readFileSync } from 'node:fs';
+import { beforeAll, expect, test } from 'vitest';
+import { makePlan } from '../../src/engine/plan.ts';
+import { advanceImage } from '../../src/engine/stepper.ts';
+import type { ResolvedJob, Section } from '../../src/model/job.ts';
+import { openRun } from '../../workers/run.ts';
+import { AIR, edges, METAL, part, rectangle, regularPolygon, resolvedJob } from '../helpers/resolved-jobs.ts';
+
+let kernel: WebAssembly.Module;
+beforeAll(async () => {
+  kernel = await WebAssembly.compile(readFileSync(new URL('../../workers/kernel/kernel.wasm', import.meta.url)));
+});
+
+/** The image begins one page into the kernel's memory. */
+const BASE = 65536;
+const STEPS = 60;
+
+/** Words that differ between kernel and twin after two slices of the job. */
+async function differences(job: ResolvedJob): Promise<{ differ: number; live: number }> {
+  const plan = makePlan(job, 'main');
+  if (!plan.ok) throw new Error(plan.errors[0].message);
+  const opened = await openRun(plan.value, kernel);
+  if (!opened.ok) throw new Error(opened.errors[0].message);
+  const run = opened.value;
+  const { header, fixed, fixedOffset, imageBytes, sourceTableOffset, slice, sources, feeds } = plan.value;
+  const words = Math.ceil(imageBytes / 16) * 4;
+  const twin = new ArrayBuffer(4 * words);
+  new Int32Array(twin).set(header);
+  new Uint8Array(twin).set(new Uint8Array(fixed), fixedOffset);
+  const memory = new Uint8Array(run.image.buffer, BASE, imageBytes);
+  let differ = 0;
+  let live = 0;
+  for (let slices = 0; slices < 2; slices++) {
+    run.advance(STEPS);
+    // The tables of the drives are filled from outside the kernel: the twin is given the same ones.
+    const copy = (at: number, bytes: number): void => new Uint8Array(twin).set(memory.subarray(at, at + bytes), at);
+    copy(sourceTableOffset, 8 * slice * sources.length);
+    for (const feed of feeds) copy(feed.tableOffset, 8 * slice * feed.fed);
+    advanceImage(twin, STEPS);
+    const ours = new Int32Array(run.image.buffer, BASE, imageBytes >> 2);
+    const theirs = new Int32Array(twin);
+    for (let k = 0; k < ours.length; k++) {
+      if (ours[k] !== theirs[k]) differ++;
+      if (ours[k] !== 0) live++;
+    }
+  }
+  return { differ, live };
+}
+
+const disc = part('disc', { ...AIR, epsilonRelative: 4, muRelative: 1.5, sigma: 0.05, sigmaMagnetic: 20 }, regularPolygon([0.2, 0.1], 0.04, 60));
+const wall = part('wall', METAL, rectangle(0.05, 0, 0.055, 0.08));
+const cases: Record<string, Partial<ResolvedJob>> = {
+  'an open sheet': {},
+  'lossy dielectric and metal': { parts: [disc, wall] },
+  'parts that run into the absorber': { parts: [part('block', { ...AIR, epsilonRelative: 3, sigma: 0.01 }, rectangle(0.1, -0.1, 0.4, 0.05))] },
+  'repeating edges': { sheet: { ...resolvedJob().sheet, edges: edges('repeating') } },
+  'magnetic and metal edges': { sheet: { ...resolvedJob().sheet, edges: edges('magnetic', 'metal', 'metal', 'magnetic') } },
+  'a plane wave at an angle': {
+    drives: [{ id: 'wave', name: 'Wave', kind: 'plane wave', amplitude: 1, angleRadians: 0.5, waveform: { kind: 'band pulse' } }],
+  },
+};
+
+for (const section of ['E out of plane', 'H out of plane'] satisfies Section[]) {
+  for (const [name, change] of Object.entries(cases)) {
+    test(`kernel and twin agree bit for bit: ${section}, ${name}`, async () => {
+      const { differ, live } = await differences(resolvedJob({ section, ...change }));
+      expect(live).toBeGreaterThan(1000);
+      expect(differ).toBe(0);
+    });
+  }
+}
