@@ -16,7 +16,6 @@ import {
 import type { Drive, Job, OwnMaterial, Part, Probe, Quantity } from './job.ts';
 import { validateJob } from './parse-job.ts';
 import { copyPlainData } from './plain-data.ts';
-import { shareById, shareStructure } from './share-structure.ts';
 
 export type ListName = 'parts' | 'drives' | 'probes' | 'materials';
 
@@ -78,19 +77,11 @@ function edit(job: Job, command: Command): Result<unknown> {
 
 /** Applies one command; never mutates `job`. What the command leaves alone keeps its identity. Errors name path, value and mend. */
 export function applyCommand(job: Job, command: Command): Result<Job> {
-  const edited = edit(job, command);
-  if (!edited.ok) return edited;
-  const plain = copyPlainData(edited.value);
+  // The command may carry anything (`set` does); the job itself is known to be plain.
+  const plain = copyPlainData(command);
   if (!plain.ok) return plain;
-  const valid = validateJob(plain.value);
-  if (!valid.ok) return valid;
-  const lists = {
-    parts: shareById(job.parts, valid.value.parts),
-    drives: shareById(job.drives, valid.value.drives),
-    probes: shareById(job.probes, valid.value.probes),
-    materials: shareById(job.materials, valid.value.materials),
-  };
-  return ok(shareStructure(job, { ...valid.value, ...lists }));
+  const edited = edit(job, plain.value as Command);
+  return edited.ok ? validateJob(edited.value, job) : edited;
 }
 
 /** Ids that `after` has and `before` has not: what to select after adding or duplicating. */

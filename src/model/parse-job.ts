@@ -12,6 +12,7 @@ import { makeNumberReader } from './number-reader.ts';
 import { copyPlainData } from './plain-data.ts';
 import { checkQuantities } from './resolve-job.ts';
 import { describeIssues } from './schema-faults.ts';
+import { shareJob } from './share-structure.ts';
 
 const MOST_ERRORS = 20;
 
@@ -94,11 +95,12 @@ export function parseJob(input: unknown): Result<Job> {
   return validateJob(migrateJob({ ...document.value }, version.value));
 }
 
-/** Checks plain data of the current version. */
-export function validateJob(document: unknown): Result<Job> {
+/** Checks plain data of the current version. The job keeps the pieces of `former` that are equal. */
+export function validateJob(document: unknown, former?: Job): Result<Job> {
   const parsed = JOB_SCHEMA.safeParse(document);
   if (!parsed.success) return failWith(describeIssues(parsed.error.issues, document));
-  const job = completeJob(parsed.data);
+  const completed = completeJob(parsed.data);
+  const job = former === undefined ? completed : shareJob(former, completed);
   const faults = [...findRepeatedIds(job), ...findUnknownMaterials(job), ...findUnpairedEdges(job), ...findSampleFaults(job)];
   if (faults.length > 0) return failWith(faults);
   const reader = makeNumberReader(job.values);

@@ -91,6 +91,9 @@ function readWaveform(waveform: Waveform, reader: NumberReader, path: string): R
   }
 }
 
+/** Parts known to read well under the values given: edits share parts, and freehand ones have thousands of points. */
+const readableParts = new WeakMap<Part, Job['values']>();
+
 /** Notes every quantity of the job that cannot be read; the relations between values are left to `resolveJob`. */
 export function checkQuantities(job: Job, reader: NumberReader): void {
   const evaluate = makeEvaluator(job.values);
@@ -100,7 +103,11 @@ export function checkQuantities(job: Job, reader: NumberReader): void {
   }
   if (reader.faults.length > 0) return;
   readFrame(job, reader);
-  for (const [k, part] of job.parts.entries()) rulesOf(part).check(part, reader, `parts[${k}].`);
+  for (const [k, part] of job.parts.entries()) {
+    if (readableParts.get(part) === job.values) continue;
+    rulesOf(part).check(part, reader, `parts[${k}].`);
+    if (reader.faults.length === 0) readableParts.set(part, job.values);
+  }
 }
 
 function checkRelations(frame: ReturnType<typeof readFrame>, reader: NumberReader): void {

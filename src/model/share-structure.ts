@@ -1,5 +1,6 @@
 // Owns keeping the identity of what an edit did not change, so that caches and screens see only what did.
-// Must not know jobs.
+// Must not know how edits are made.
+import type { Job } from './job.ts';
 
 function isObject(value: unknown): value is Record<string, unknown> {
   return typeof value === 'object' && value !== null && !Array.isArray(value);
@@ -25,9 +26,19 @@ export function shareStructure<T>(before: unknown, after: T): T {
 }
 
 /** As `shareStructure`, for lists of things with ids: a thing is matched with its former self wherever it stood. */
-export function shareById<T extends { readonly id: string }>(before: readonly T[], after: readonly T[]): readonly T[] {
+function shareById<T extends { readonly id: string }>(before: readonly T[], after: readonly T[]): readonly T[] {
   const former = new Map(before.map((item) => [item.id, item]));
   const shared = after.map((item) => shareStructure(former.get(item.id), item));
   const same = before.length === shared.length && shared.every((item, k) => item === before[k]);
   return same ? before : shared;
+}
+
+export function shareJob(before: Job, after: Job): Job {
+  return shareStructure(before, {
+    ...after,
+    parts: shareById(before.parts, after.parts),
+    drives: shareById(before.drives, after.drives),
+    probes: shareById(before.probes, after.probes),
+    materials: shareById(before.materials, after.materials),
+  });
 }
