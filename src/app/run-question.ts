@@ -11,6 +11,12 @@ export function asksTheSame(a: Job, b: Job): boolean {
   return keys.every((key) => key === 'title' || key === 'notes' || same(key));
 }
 
+/** True when a field computed for `a` lies where `b` has its sheet. */
+export function standsOnSameSheet(a: ResolvedJob, b: ResolvedJob): boolean {
+  const same = a.sheet.widthMetres === b.sheet.widthMetres && a.sheet.heightMetres === b.sheet.heightMetres;
+  return same && a.section === b.section;
+}
+
 /** A reference run that leaves out nothing would repeat the run itself. */
 export function wantsReference(job: Job): boolean {
   switch (job.reference) {
