@@ -56,6 +56,8 @@ function testConfig(): NonNullable<ViteUserConfig['test']> {
   return {
     environment: 'node',
     include: ['test/{unit,property,parity,evidence}/**/*.test.{ts,tsx}'],
+    // The counts for `npm test`, and the table of evidence.
+    reporters: ['default', ['json', { outputFile: 'test-results/vitest.json' }], './test/evidence/evidence-reporter.ts'],
   };
 }
 

@@ -18,14 +18,10 @@ const env = await orExit(async () => {
 rmSync(RESULTS, { recursive: true, force: true });
 mkdirSync(RESULTS, { recursive: true });
 const tallies = [
-  runRunner(
-    'vitest',
-    ['vitest/vitest.mjs', 'run', '--reporter=default', '--reporter=json', '--outputFile=test-results/vitest.json'],
-    (report) => ({
-      passed: report.numPassedTests,
-      failed: report.numFailedTests,
-    }),
-  ),
+  runRunner('vitest', ['vitest/vitest.mjs', 'run'], (report) => ({
+    passed: report.numPassedTests,
+    failed: report.numFailedTests,
+  })),
   runRunner('playwright', ['@playwright/test/cli.js', 'test', '--config', 'test/playwright.config.ts'], ({ stats }) => ({
     passed: stats.expected + stats.flaky,
     failed: stats.unexpected,
