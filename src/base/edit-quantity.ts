@@ -15,11 +15,18 @@ interface PlainQuantity {
   readonly unit: string;
 }
 
+/** Reads a text known to be good; NaN when it is not. */
+function valueOf(text: string, dimension: Dimension, values: NamedValues): number {
+  const result = parseQuantity(text, dimension, values);
+  return result.ok ? result.value : Number.NaN;
+}
+
 function readPlain(text: string, dimension: Dimension): PlainQuantity | null {
   const match = PLAIN_QUANTITY.exec(text);
   const unit = UNITS.get((match?.[2] ?? '').replaceAll('\u03bc', '\u00b5'));
   if (match === null || unit === undefined || !sameExponents(unit.exponents, DIMENSIONS[dimension])) return null;
-  return { value: (Number(match[1]) * unit.times) / unit.over, unit: match[2] ?? '' };
+  const value = valueOf(text, dimension, {});
+  return Number.isFinite(value) ? { value, unit: match[2] ?? '' } : null;
 }
 
 /** True for a number with a unit, or a bare zero; false for an expression. */
@@ -32,12 +39,6 @@ export function writeInUnit(value: number, unitText: string): string {
   const unit = UNITS.get(unitText.replaceAll('\u03bc', '\u00b5'));
   const scaled = unit === undefined ? value : (value * unit.over) / unit.times;
   return `${String(Number(scaled.toPrecision(DIGITS_KEPT)))} ${unitText}`;
-}
-
-/** Reads a text known to be good; NaN when it is not. */
-function valueOf(text: string, dimension: Dimension, values: NamedValues): number {
-  const result = parseQuantity(text, dimension, values);
-  return result.ok ? result.value : Number.NaN;
 }
 
 /** A sum with less than this share of either term is rounding noise and is written as zero. */

@@ -42,8 +42,12 @@ function quote(text: string): string {
   return `"${text.length > 60 ? `${text.slice(0, 57)}...` : text}"`;
 }
 
-function applyUnit(measure: Measure, unit: Unit): Measure {
-  return { value: (measure.value * unit.times) / unit.over, exponents: combineExponents(measure.exponents, unit.exponents, 1) };
+/** `literal` is the number's own text when it stands right before the unit: its decimals are then moved exactly. */
+function applyUnit(measure: Measure, unit: Unit, literal: string | null): Measure {
+  const exponents = combineExponents(measure.exponents, unit.exponents, 1);
+  if (literal === null || unit.tens === null) return { value: (measure.value * unit.times) / unit.over, exponents };
+  const [mantissa = '', exponent = '0'] = literal.toLowerCase().split('e');
+  return { value: Number(`${mantissa}e${Number(exponent) + unit.tens}`), exponents };
 }
 
 function splitTokens(text: string): Result<readonly Token[]> {
@@ -208,7 +212,7 @@ class Reader {
     const token = this.peek();
     if (token.kind === 'number') {
       this.next += 1;
-      return this.withUnit({ value: Number(token.text), exponents: PLAIN });
+      return this.withUnit({ value: Number(token.text), exponents: PLAIN }, token.text);
     }
     if (token.kind === 'word') return this.readWord(token.text, depth);
     if (this.take('(')) {
@@ -233,7 +237,7 @@ class Reader {
   }
 
   /** A unit may follow a number or a bracket. "V/m" is one unit unless it is written apart and m is a named value. */
-  private withUnit(measure: Measure): Measure {
+  private withUnit(measure: Measure, literal: string | null = null): Measure {
     const word = this.peek();
     if (word.kind !== 'word') return measure;
     const denominator = this.peek(2);
@@ -242,13 +246,13 @@ class Reader {
       const tight = denominator.at === word.at + word.text.length + 1;
       if (compound !== undefined && (tight || this.lookUp(denominator.text, 0) === null)) {
         this.next += 3;
-        return applyUnit(measure, compound);
+        return applyUnit(measure, compound, literal);
       }
     }
     const unit = UNITS.get(word.text);
     if (unit === undefined) return measure;
     this.next += 1;
-    return applyUnit(measure, unit);
+    return applyUnit(measure, unit, literal);
   }
 
   private readWord(word: string, depth: number): Measure {

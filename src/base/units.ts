@@ -7,9 +7,11 @@ export type Exponents = readonly [length: number, time: number, current: number,
 export type Dimension = 'length' | 'frequency' | 'time' | 'angle' | 'field' | 'current' | 'voltage' | 'decibel' | 'number';
 
 export interface Unit {
-  /** SI value = value * times / over. Two whole numbers where it can be, so that 5 µm is the number nearest to 5e-6. */
+  /** SI value = value * times / over. */
   readonly times: number;
   readonly over: number;
+  /** The power of ten that times / over is, or null. Lets 8.2 GHz be exactly the number nearest to 8.2e9. */
+  readonly tens: number | null;
   readonly exponents: Exponents;
 }
 
@@ -53,26 +55,29 @@ export const DIMENSION_EXAMPLES: Readonly<Record<Dimension, string>> = {
   number: '1.5',
 };
 
-const PREFIXES: readonly (readonly [symbol: string, times: number, over: number])[] = [
-  ['f', 1, 1e15],
-  ['p', 1, 1e12],
-  ['n', 1, 1e9],
-  ['µ', 1, 1e6],
-  ['u', 1, 1e6],
-  ['m', 1, 1e3],
-  ['', 1, 1],
-  ['k', 1e3, 1],
-  ['M', 1e6, 1],
-  ['G', 1e9, 1],
-  ['T', 1e12, 1],
+const PREFIXES: readonly (readonly [symbol: string, tens: number])[] = [
+  ['f', -15],
+  ['p', -12],
+  ['n', -9],
+  ['µ', -6],
+  ['u', -6],
+  ['m', -3],
+  ['', 0],
+  ['k', 3],
+  ['M', 6],
+  ['G', 9],
+  ['T', 12],
 ];
+
+function makeDecimalUnit(tens: number, exponents: Exponents): Unit {
+  return { times: tens > 0 ? 10 ** tens : 1, over: tens < 0 ? 10 ** -tens : 1, tens, exponents };
+}
 
 function makeUnits(): ReadonlyMap<string, Unit> {
   const units = new Map<string, Unit>();
   const addPrefixed = (symbol: string, dimension: Dimension, prefixes: string): void => {
-    for (const [prefix, times, over] of PREFIXES) {
-      if (prefix === '' || prefixes.includes(prefix))
-        units.set(prefix + symbol, { times, over, exponents: DIMENSIONS[dimension] });
+    for (const [prefix, tens] of PREFIXES) {
+      if (prefix === '' || prefixes.includes(prefix)) units.set(prefix + symbol, makeDecimalUnit(tens, DIMENSIONS[dimension]));
     }
   };
   addPrefixed('m', 'length', 'pnµumk');
@@ -83,16 +88,16 @@ function makeUnits(): ReadonlyMap<string, Unit> {
   addPrefixed('A', 'current', 'nµumk');
   addPrefixed('V', 'voltage', 'nµumk');
   const others: readonly (readonly [string, number, number, Exponents])[] = [
-    ['cm', 1, 100, DIMENSIONS.length],
     ['in', 254, 1e4, DIMENSIONS.length],
     ['mil', 254, 1e7, DIMENSIONS.length],
     ['ft', 3048, 1e4, DIMENSIONS.length],
     ['deg', Math.PI, 180, DIMENSIONS.angle],
     ['°', Math.PI, 180, DIMENSIONS.angle],
-    ['dB', 1, 1, DIMENSIONS.decibel],
-    ['m/s', 1, 1, [1, -1, 0, 0, 0, 0]],
   ];
-  for (const [symbol, times, over, exponents] of others) units.set(symbol, { times, over, exponents });
+  for (const [symbol, times, over, exponents] of others) units.set(symbol, { times, over, tens: null, exponents });
+  units.set('cm', makeDecimalUnit(-2, DIMENSIONS.length));
+  units.set('dB', makeDecimalUnit(0, DIMENSIONS.decibel));
+  units.set('m/s', makeDecimalUnit(0, [1, -1, 0, 0, 0, 0]));
   return units;
 }
 

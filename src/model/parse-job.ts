@@ -92,7 +92,11 @@ export function parseJob(input: unknown): Result<Job> {
   }
   const version = readVersion(document.value);
   if (!version.ok) return version;
-  return validateJob(migrateJob({ ...document.value }, version.value));
+  const { $schema: schemaName, ...plain } = document.value as Record<string, unknown>;
+  if (schemaName !== undefined && typeof schemaName !== 'string') {
+    return fail({ code: 'form', path: '$schema', message: 'The name of the schema is not a text.', hint: 'Remove it.' });
+  }
+  return validateJob(migrateJob(plain, version.value));
 }
 
 /** Checks plain data of the current version. The job keeps the pieces of `former` that are equal. */
