@@ -1,0 +1,20 @@
+// Owns the list of examples as components see it.
+// Must not know where the examples lie.
+import { useEffect, useState } from 'react';
+import type { Example } from '../../app/examples.ts';
+import { exampleShelf } from '../../app/examples.ts';
+
+/** Empty until the list has come, and when it never comes. */
+export function useExamples(): readonly Example[] {
+  const [examples, setExamples] = useState<readonly Example[]>([]);
+  useEffect(() => {
+    let gone = false;
+    void exampleShelf.examples().then((list) => {
+      if (!gone && list.ok) setExamples(list.value);
+    });
+    return () => {
+      gone = true;
+    };
+  }, []);
+  return examples;
+}
