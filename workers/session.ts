@@ -21,6 +21,10 @@ export interface SessionHost {
 /** Time between looks at the messages, and steps between looks at the energy. */
 const SLICE_MILLISECONDS = 8;
 const ENERGY_EVERY = 256;
+/** Energy may not rise again after the drives have ended; this much above its lowest is no ripple. */
+const GROWTH_FACTOR = 4;
+/** Below this the energy is rounding noise, which may wander. */
+const ROUNDING_DB = -100;
 
 export function makeSession(host: SessionHost): SessionApi {
   const session = new Session(host);
@@ -48,6 +52,8 @@ class Session implements SessionApi {
   private energyPeak = 0;
   private energyDb = 0;
   private energyStep = 0;
+  /** Lowest energy since the drives ended. */
+  private energyLowest = Infinity;
   private pace = Infinity;
   private busyMilliseconds = 0;
   private speed = 0;
@@ -155,6 +161,7 @@ class Session implements SessionApi {
     this.energyPeak = 0;
     this.energyDb = 0;
     this.energyStep = 0;
+    this.energyLowest = Infinity;
     this.busyMilliseconds = 0;
     this.speed = 0;
   }
@@ -210,6 +217,14 @@ class Session implements SessionApi {
       if (driven && this.energyPeak > 0 && this.energyDb <= -plan.decayDb) {
         this.finish('decayed');
         return;
+      }
+      if (driven) {
+        this.energyLowest = Math.min(this.energyLowest, energy);
+        if (energy > GROWTH_FACTOR * this.energyLowest && this.energyDb > ROUNDING_DB) {
+          this.trouble = `The energy rises again after the drives have ended (step ${run.step}): an absorbing edge feeds a resonance that stands close to it. Move the structure away from the edge, or make the absorbing edge deeper.`;
+          this.finish('growing');
+          return;
+        }
       }
     }
     if (atLimit) this.finish('time limit');

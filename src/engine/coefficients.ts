@@ -40,13 +40,13 @@ export function kernelScales(grid: Grid): { uScale: number; vScale: number; pace
   return { uScale: eOut ? 1 : ETA0, vScale: eOut ? ETA0 / h : 1 / h, pace: C0 * grid.dtSeconds * h };
 }
 
-export function makeCoefficients(grid: Grid, regions: readonly Region[], background: Medium, lowHertz: number): Coefficients {
+export function makeCoefficients(grid: Grid, regions: readonly Region[], background: Medium, band: { fromHertz: number; toHertz: number }): Coefficients {
   const { x, y } = grid;
   const media = makeMediaRows(grid, regions, background);
   const metal = markMetal(grid, regions);
-  const index = refractiveIndex(background, lowHertz);
-  const absorbX = makeAbsorber(x, grid.dtSeconds, index, lowHertz);
-  const absorbY = makeAbsorber(y, grid.dtSeconds, index, lowHertz);
+  const index = refractiveIndex(background, band.fromHertz);
+  const absorbX = makeAbsorber(x, grid.dtSeconds, index, band);
+  const absorbY = makeAbsorber(y, grid.dtSeconds, index, band);
   const { uScale, vScale, pace } = kernelScales(grid);
   const metalClasses = metal === null ? null : classifyRows(metal, x.count, y.count);
   const lossPer = (grid.dtSeconds * C0) / 2;

@@ -94,7 +94,7 @@ export function makePlan(job: ResolvedJob, role: RunRole): Result<RunPlan> {
   const parts =
     role === 'main' ? job.parts : job.reference === 'empty sheet' ? [] : job.parts.filter((part) => !part.leftOutOfReference);
   const regions = paintParts(parts, job.sheet);
-  const coefficients = withCache(makeCoefficients(grid, regions, job.sheet.background, job.band.fromHertz));
+  const coefficients = withCache(makeCoefficients(grid, regions, job.sheet.background, job.band));
   return writePlan(job, role, grid, coefficients, launches, bound.state);
 }
 
@@ -306,8 +306,8 @@ function writeLine(
   line: IncidentLine,
 ): { feed: LineFeed; offsetOf: (field: 'u' | 'vx' | 'vy', entry: number) => number } {
   const offsets = { u: state.take(8 * line.length), vx: state.take(8 * line.length), vy: state.take(8 * line.length) };
-  const a = image.take(8 * line.length);
-  const b = image.take(8 * line.length);
+  const a = image.take(8 * line.a.length);
+  const b = image.take(8 * line.b.length);
   image.doubles(a, line.a);
   image.doubles(b, line.b);
   const tableOffset = state.take(8 * SLICE_STEPS * line.fed);

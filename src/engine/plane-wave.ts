@@ -31,6 +31,10 @@ const CLEARANCE = 2;
 /** Finest steps of the angle: tan(angle) dx/dy is taken as a ratio of whole numbers up to this. */
 const MOST_STEPS = 40;
 
+/** Entries of the line's absorbing tail per fed entry, and sigma dt / 2 eps at its end. */
+const TAIL_PER_FED = 60;
+const MOST_TAIL_LOSS = 0.3;
+
 type PlaneWave = Extract<ResolvedDrive, { kind: 'plane wave' }>;
 
 /** Chooses the launch from the geometry of the job, or says why none fits. */
@@ -150,7 +154,7 @@ export interface IncidentLine {
   readonly my: number;
   readonly length: number;
   readonly fed: number;
-  /** Matched absorbing tail: a and b factors per entry. */
+  /** Matched absorbing tail: a and b factors per half entry. */
   readonly a: Float64Array;
   readonly b: Float64Array;
   readonly bu: number;
@@ -199,16 +203,17 @@ export function makeIncidentLine(job: ResolvedJob, grid: Grid, drive: PlaneWave,
   const index = Math.sqrt(back.uM * back.vM);
   const { uScale, pace } = kernelScales(grid);
   const fed = Math.max(Math.abs(mx), Math.abs(my));
-  const tail = 60 * fed;
+  const tail = TAIL_PER_FED * fed;
   const span = Math.abs(mx) * (launch.i1 - launch.i0 + 2) + Math.abs(my) * (launch.j1 - launch.j0 + 2);
   const start = 3 * fed;
   const length = start + span + 2 * fed + tail;
-  const a = new Float64Array(length).fill(1);
-  const b = new Float64Array(length).fill(1);
-  for (let r = length - tail; r < length; r++) {
-    const loss = 0.3 * ((r - length + tail) / tail) ** 3;
-    a[r] = (1 - loss) / (1 + loss);
-    b[r] = 1 / (1 + loss);
+  const a = new Float64Array(2 * length).fill(1);
+  const b = new Float64Array(2 * length).fill(1);
+  for (let half = 2 * (length - tail); half < 2 * length; half++) {
+    // Electric and magnetic loss are matched only if each is taken where its own field stands.
+    const loss = MOST_TAIL_LOSS * ((half / 2 - length + tail) / tail) ** 3;
+    a[half] = (1 - loss) / (1 + loss);
+    b[half] = 1 / (1 + loss);
   }
   // The corner that the wave meets first stands at entry `start`.
   const iRef = mx >= 0 ? launch.i0 : launch.i1;

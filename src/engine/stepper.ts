@@ -181,7 +181,7 @@ function lineU({ i32, f64 }: Views, line: number, step: number): void {
   for (let r = 0; r < fed; r++) f64[u + r] = f64[feed + r]!;
   for (let r = fed; r < length - fed; r++) {
     const curl = f64[vy + r + mx]! - f64[vy + r]! - (f64[vx + r + my]! - f64[vx + r]!);
-    f64[u + r] = f64[a + r]! * f64[u + r]! + f64[b + r]! * bu * curl;
+    f64[u + r] = f64[a + 2 * r]! * f64[u + r]! + f64[b + 2 * r]! * bu * curl;
   }
 }
 
@@ -194,9 +194,9 @@ function lineV({ i32, f64 }: Views, line: number): void {
   const bvx = f64[(line + L.LINE_BVX) >> 1]!;
   const bvy = f64[(line + L.LINE_BVY) >> 1]!;
   for (let r = Math.max(0, my); r < length + Math.min(0, my); r++) {
-    f64[vx + r] = f64[a + r]! * f64[vx + r]! - f64[b + r]! * bvx * (f64[u + r]! - f64[u + r - my]!);
+    f64[vx + r] = f64[a + 2 * r - my]! * f64[vx + r]! - f64[b + 2 * r - my]! * bvx * (f64[u + r]! - f64[u + r - my]!);
   }
   for (let r = Math.max(0, mx); r < length + Math.min(0, mx); r++) {
-    f64[vy + r] = f64[a + r]! * f64[vy + r]! + f64[b + r]! * bvy * (f64[u + r]! - f64[u + r - mx]!);
+    f64[vy + r] = f64[a + 2 * r - mx]! * f64[vy + r]! + f64[b + 2 * r - mx]! * bvy * (f64[u + r]! - f64[u + r - mx]!);
   }
 }

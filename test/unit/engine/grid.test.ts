@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { makeAxis, makeGrid, type Grid } from '../../../src/engine/grid.ts';
 import type { ResolvedJob } from '../../../src/model/job.ts';
-import { AIR, edges, METAL, part, rectangle, resolvedJob } from '../../helpers/resolved-jobs.ts';
+import { AIR, METAL, part, rectangle, resolvedJob } from '../../helpers/resolved-jobs.ts';
 
 function gridOf(change: Partial<ResolvedJob>): Grid {
   const grid = makeGrid(resolvedJob(change));

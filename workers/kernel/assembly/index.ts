@@ -326,7 +326,7 @@ function lineU(line: usize, base: usize, step: i32): void {
     const p = <usize>r << 3;
     const curl =
       load<f64>(vy + (<usize>(r + mx) << 3)) - load<f64>(vy + p) - (load<f64>(vx + (<usize>(r + my) << 3)) - load<f64>(vx + p));
-    store<f64>(u + p, load<f64>(a + p) * load<f64>(u + p) + load<f64>(b + p) * bu * curl);
+    store<f64>(u + p, load<f64>(a + 2 * p) * load<f64>(u + p) + load<f64>(b + 2 * p) * bu * curl);
   }
 }
 
@@ -344,12 +344,14 @@ function lineV(line: usize, base: usize): void {
   for (let r = max(0, my); r < length + min(0, my); r++) {
     const p = <usize>r << 3;
     const rise = load<f64>(u + p) - load<f64>(u + (<usize>(r - my) << 3));
-    store<f64>(vx + p, load<f64>(a + p) * load<f64>(vx + p) - load<f64>(b + p) * bvx * rise);
+    const h = <usize>(2 * r - my) << 3;
+    store<f64>(vx + p, load<f64>(a + h) * load<f64>(vx + p) - load<f64>(b + h) * bvx * rise);
   }
   for (let r = max(0, mx); r < length + min(0, mx); r++) {
     const p = <usize>r << 3;
     const rise = load<f64>(u + p) - load<f64>(u + (<usize>(r - mx) << 3));
-    store<f64>(vy + p, load<f64>(a + p) * load<f64>(vy + p) + load<f64>(b + p) * bvy * rise);
+    const h = <usize>(2 * r - mx) << 3;
+    store<f64>(vy + p, load<f64>(a + h) * load<f64>(vy + p) + load<f64>(b + h) * bvy * rise);
   }
 }
 
