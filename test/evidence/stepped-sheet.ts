@@ -33,7 +33,7 @@ export async function openSheet(draft: unknown): Promise<SteppedSheet> {
   const kernel = await WebAssembly.compile(await readFile(new URL('../../workers/kernel/kernel.wasm', import.meta.url)));
   const run = unwrap(await openRun(plan, kernel));
   const regions = paintParts(job.parts, job.sheet);
-  const coefficients = makeCoefficients(unwrap(makeGrid(job)), regions, job.sheet.background, job.band.fromHertz);
+  const coefficients = makeCoefficients(unwrap(makeGrid(job)), regions, job.sheet.background, job.band);
   const { fields } = plan;
   const starts = { u: fields.uOffset >> 2, vx: fields.vxOffset >> 2, vy: fields.vyOffset >> 2 };
   const index = (field: Field, j: number, i: number): number => starts[field] + (j + PAD_ROWS) * fields.stride + PAD_COLUMNS + i;
