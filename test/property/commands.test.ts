@@ -50,13 +50,11 @@ const moves: fc.Arbitrary<Move> = fc.oneof(
   fc
     .tuple(picks, metres)
     .map(([chosen, dxMetres]): Move => (job) => ({ do: 'duplicate', ids: pickIds(job, chosen), dxMetres, dyMetres: 0 })),
-  fc
-    .tuple(fc.nat(9), fc.nat(9))
-    .map(([pick, to]): Move => (job) => ({
-      do: 'reorder',
-      id: job.parts[pick % Math.max(1, job.parts.length)]?.id ?? 'none',
-      to,
-    })),
+  fc.tuple(fc.nat(9), fc.nat(9)).map(([pick, to]): Move => (job) => ({
+    do: 'reorder',
+    id: job.parts[pick % Math.max(1, job.parts.length)]?.id ?? 'none',
+    to,
+  })),
   fc
     .tuple(fc.constantFrom('a', 'b', 'pi'), fc.oneof(mm, fc.constantFrom('a/2', 'b + 1 mm', 'no')))
     .map(([name, value]): Move => () => ({ do: 'name value', name, value })),

@@ -2,8 +2,10 @@
 // Must not know any kind in particular.
 import { retargetQuantity, shiftQuantity } from '../../base/edit-quantity.ts';
 import type { NamedValues } from '../../base/quantity.ts';
+import type { AppError } from '../../base/result.ts';
 import type { Point, XY } from '../job.ts';
 import type { NumberReader } from '../number-reader.ts';
+import { countCrossings } from '../outline.ts';
 import type { Handle, PartDimension } from './part-kind.ts';
 
 /** More handles or measures than this hide the drawing. */
@@ -23,6 +25,19 @@ export function movePoints(points: readonly Point[], dxMetres: number, dyMetres:
 
 export function readPoints(points: readonly Point[], reader: NumberReader, path: string): XY[] {
   return points.map((point, k) => reader.point(point, `${path}points[${k}]`));
+}
+
+/** A line may cross itself this often; uniting its outline then takes about half a second. */
+const MOST_CROSSINGS = 2000;
+
+export function findTangle(points: readonly XY[], path: string): AppError | null {
+  if (countCrossings(points, MOST_CROSSINGS) <= MOST_CROSSINGS) return null;
+  return {
+    code: 'shape',
+    path: `${path}points`,
+    message: `The line crosses itself more than ${MOST_CROSSINGS} times.`,
+    hint: 'Draw it as several parts, or with fewer points.',
+  };
 }
 
 export function pointHandles(points: readonly XY[]): readonly Handle[] {

@@ -3,7 +3,7 @@
 import type { PolygonPart, XY } from '../job.ts';
 import { makeRingOutline, outlineBounds } from '../outline.ts';
 import { makePartKind } from './part-kind.ts';
-import { dragPoint, lengthDimensions, movePoints, pointHandles, readPoints, setSideLength } from './points.ts';
+import { dragPoint, findTangle, lengthDimensions, movePoints, pointHandles, readPoints, setSideLength } from './points.ts';
 
 interface PolygonShape {
   readonly points: readonly XY[];
@@ -13,7 +13,7 @@ export const polygonKind = makePartKind<PolygonPart, PolygonShape>({
   kind: 'polygon',
   label: 'polygon',
   readShape: (part, reader, path) => ({ points: readPoints(part.points, reader, path) }),
-  findFault: () => null,
+  findFault: (shape, path) => findTangle(shape.points, path),
   outline: (shape) => makeRingOutline(shape.points),
   smallestMetres: (shape) => {
     const { left, right, bottom, top } = outlineBounds([shape.points]);

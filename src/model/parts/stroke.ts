@@ -4,7 +4,7 @@ import { retargetQuantity } from '../../base/edit-quantity.ts';
 import type { StrokePart, XY } from '../job.ts';
 import { makeLineOutline } from '../outline.ts';
 import { makePartKind } from './part-kind.ts';
-import { dragPoint, movePoints, pointHandles, readPoints, thicknessDimension, thicknessThrough } from './points.ts';
+import { dragPoint, findTangle, movePoints, pointHandles, readPoints, thicknessDimension, thicknessThrough } from './points.ts';
 
 interface StrokeShape {
   readonly points: readonly XY[];
@@ -18,7 +18,7 @@ export const strokeKind = makePartKind<StrokePart, StrokeShape>({
     points: readPoints(part.points, reader, path),
     width: reader.read(part.width, 'length', `${path}width`, 'size'),
   }),
-  findFault: () => null,
+  findFault: (shape, path) => findTangle(shape.points, path),
   outline: (shape) => makeLineOutline(shape.points, shape.width, 'round'),
   smallestMetres: (shape) => shape.width,
   handles: (shape) => [

@@ -7,6 +7,7 @@ import type { Phrase } from './part-kind.ts';
 import { makePartKind } from './part-kind.ts';
 import {
   dragPoint,
+  findTangle,
   lengthDimensions,
   movePoints,
   pointHandles,
@@ -34,7 +35,7 @@ export const wallKind = makePartKind<WallPart, WallShape>({
     points: readPoints(part.points, reader, path),
     thickness: reader.read(part.thickness, 'length', `${path}thickness`, 'size'),
   }),
-  findFault: () => null,
+  findFault: (shape, path) => findTangle(shape.points, path),
   outline: (shape) => makeLineOutline(shape.points, shape.thickness, 'square'),
   smallestMetres: (shape) => shape.thickness,
   handles: (shape) => [
