@@ -64,16 +64,20 @@ function write(value: unknown, indent: string, keys?: readonly string[]): string
   if (typeof value !== 'object' || value === null) return JSON.stringify(value);
   const list = Array.isArray(value);
   const inside = `${indent}  `;
-  const items = list
-    ? value.map((item: unknown) => write(item, inside))
-    : (keys ?? orderKeys(value)).map(
-        (key) => `${JSON.stringify(key)}: ${write((value as Record<string, unknown>)[key], inside)}`,
-      );
+  const writeItem = (key: string): string =>
+    `${JSON.stringify(key)}: ${write((value as Record<string, unknown>)[key], inside, key === 'values' ? ownKeys(value, key) : undefined)}`;
+  const items = list ? value.map((item: unknown) => write(item, inside)) : (keys ?? orderKeys(value)).map(writeItem);
   const [open, close, pad] = list ? ['[', ']', ''] : ['{', '}', ' '];
   if (items.length === 0) return open + close;
   const line = `${open}${pad}${items.join(', ')}${pad}${close}`;
-  const fits = keys === undefined && line.length <= LINE_WIDTH - indent.length && !line.includes('\n');
+  const fits = keys !== KEY_ORDER && line.length <= LINE_WIDTH - indent.length && !line.includes('\n');
   return fits ? line : `${open}\n${items.map((item) => inside + item).join(',\n')}\n${indent}${close}`;
+}
+
+/** Named values keep the order the person gave them. (Samples have a list under the same key; lists have no order to keep.) */
+function ownKeys(parent: object, key: string): readonly string[] | undefined {
+  const inner: unknown = (parent as Record<string, unknown>)[key];
+  return typeof inner === 'object' && inner !== null && !Array.isArray(inner) ? Object.keys(inner) : undefined;
 }
 
 /** The same job always gives the same text; `parseJob` of it gives the same job. Ends with a line break. */

@@ -1,5 +1,5 @@
 import fc from 'fast-check';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { applyCommand, findAddedIds } from '../../src/model/commands.ts';
 import type { Command } from '../../src/model/commands.ts';
 import { describeCommand } from '../../src/model/describe-command.ts';
@@ -9,6 +9,9 @@ import type { Job } from '../../src/model/job.ts';
 import { makeEmptyJob, makeLineCurrent, makePart, makeProbe } from '../../src/model/new-job.ts';
 import { parseJob } from '../../src/model/parse-job.ts';
 import { serialiseJob } from '../../src/model/serialise-job.ts';
+
+// Hundreds of cases each; a busy machine may need longer than a plain test may take.
+vi.setConfig({ testTimeout: 60_000 });
 
 /** A command that may or may not fit the job it meets: indices wrap onto the things that are there. */
 type Move = (job: Job) => Command;

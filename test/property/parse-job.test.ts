@@ -1,11 +1,14 @@
 import fc from 'fast-check';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import type { Result } from '../../src/base/result.ts';
 import type { Job } from '../../src/model/job.ts';
 import { parseJob } from '../../src/model/parse-job.ts';
 import { resolveJob } from '../../src/model/resolve-job.ts';
 import { serialiseJob } from '../../src/model/serialise-job.ts';
 import { makeFullJob } from '../fixtures/full-job.ts';
+
+// Hundreds of cases each; a busy machine may need longer than a plain test may take.
+vi.setConfig({ testTimeout: 60_000 });
 
 /** Whole or not at all: an accepted job survives its own text, resolves or says why not; a refusal always has a mend. */
 function expectSound(result: Result<Job>): void {

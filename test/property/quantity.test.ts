@@ -1,8 +1,11 @@
 import fc from 'fast-check';
-import { describe, expect, it } from 'vitest';
+import { describe, expect, it, vi } from 'vitest';
 import { retargetQuantity, shiftQuantity } from '../../src/base/edit-quantity.ts';
 import type { Dimension } from '../../src/base/quantity.ts';
 import { formatQuantity, parseQuantity } from '../../src/base/quantity.ts';
+
+// Hundreds of cases each; a busy machine may need longer than a plain test may take.
+vi.setConfig({ testTimeout: 60_000 });
 
 const dimensions: readonly Dimension[] = [
   'length',

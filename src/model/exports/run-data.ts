@@ -39,7 +39,7 @@ export function describeRun(run: ExportedRun): string {
   const decay = Number.isFinite(run.energyDb)
     ? ` with the energy at ${writeDouble(Number(run.energyDb.toFixed(2)))} dB of its peak`
     : '';
-  return `${run.steps} steps; ended: ${run.stopReason}${decay}`;
+  return `ended after ${run.steps} steps: ${run.stopReason}${decay}`;
 }
 
 /** Lines every export starts with. No clock: the same job gives the same file in the browser and on the command line. */

@@ -70,7 +70,7 @@ export function makeSpectrumCsv(job: Job, data: SpectrumData, version: string): 
     ...makeHead('spectra of the probes', job, data.main, version),
     writeHeadLine('reference run', data.reference === null ? 'none' : `${job.reference}: ${describeRun(data.reference)}`),
     writeHeadLine('spectrum', 'integral of f(t) exp(-jwt) dt over the record'),
-    writeHeadLine('H', 'run over reference; "below floor" is 1 where truncation or single precision hides it'),
+    writeHeadLine('H', 'run over reference. The column named below floor is 1 where truncation or single precision hides H'),
     ['f (Hz)', ...columns.map(({ head }) => writeName(head))].join(','),
   ];
   const frequencies = data.main.frequenciesHertz;

@@ -55,7 +55,9 @@ function dragRing(part: RingPart, shape: RingShape, handle: string, at: XY, valu
   const now = shape[handle];
   // The nearest turn: dragging past the x axis must not jump by a whole circle.
   const near = angle + WHOLE * Math.round((now - angle) / WHOLE);
-  return { ...part, [handle]: retargetQuantity(part[handle], near, 'angle', values) };
+  // Past a whole turn the ring is closed.
+  const held = handle === 'to' ? Math.min(near, shape.from + WHOLE) : Math.max(near, shape.to - WHOLE);
+  return { ...part, [handle]: retargetQuantity(part[handle], held, 'angle', values) };
 }
 
 export const ringKind = makePartKind<RingPart, RingShape>({
