@@ -35,7 +35,7 @@ export function isPlainQuantity(text: string, dimension: Dimension): boolean {
 }
 
 /** SI value written in a given unit: 0.02286 in "in" is "0.9 in". */
-export function writeInUnit(value: number, unitText: string): string {
+function writeInUnit(value: number, unitText: string): string {
   const unit = UNITS.get(unitText.replaceAll('\u03bc', '\u00b5'));
   const scaled = unit === undefined ? value : (value * unit.over) / unit.times;
   return `${String(Number(scaled.toPrecision(DIGITS_KEPT)))} ${unitText}`;

@@ -15,9 +15,9 @@ export interface Measure {
 /** What a name stands for; `null` when there is no such name. `depth` counts brackets and names entered so far. */
 export type NameLookup = (name: string, depth: number) => Result<Measure> | null;
 
-export const LONGEST_EXPRESSION = 200;
+const LONGEST_EXPRESSION = 200;
 /** Brackets, signs and names of names inside one another; keeps the recursion far from the end of the stack. */
-export const DEEPEST_EXPRESSION = 100;
+const DEEPEST_EXPRESSION = 100;
 
 const CONSTANTS: ReadonlyMap<string, Measure> = new Map([
   ['pi', { value: Math.PI, exponents: PLAIN }],

@@ -63,7 +63,7 @@ function completeDrive(draft: DraftDrive, naming: Naming, section: Section): Dri
  * Time limit for a job that gives none: long enough for the pulse of a band that starts at `from` (100 periods) and for
  * thirty crossings of the sheet; the decay ends most runs far earlier.
  */
-export function chooseTimeLimit(job: Pick<DraftJob, 'band' | 'sheet' | 'values'>): string {
+function chooseTimeLimit(job: Pick<DraftJob, 'band' | 'sheet' | 'values'>): string {
   const read = makeQuantityReader(job.values);
   const [width, height] = [read(job.sheet.width, 'length'), read(job.sheet.height, 'length')];
   const from = read(job.band.from, 'frequency');

@@ -64,7 +64,7 @@ export function insertAt<T>(list: readonly T[], item: T, at = list.length): T[] 
 
 type Thing = Part | Drive | Probe;
 
-export function listOfThing(thing: Thing): 'parts' | 'drives' | 'probes' {
+function listOfThing(thing: Thing): 'parts' | 'drives' | 'probes' {
   if (!('kind' in thing)) return 'probes';
   return Object.hasOwn(PART_KINDS, thing.kind) ? 'parts' : 'drives';
 }

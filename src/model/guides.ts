@@ -12,7 +12,7 @@ interface GuideRow {
   readonly source: string;
 }
 
-export const GUIDE_STANDARD = 'IEC 60153-2 (R numbers), EIA (WR numbers): inner sizes in mm, TE10 cutoff c/2a, usual EIA band';
+// IEC 60153-2 (R numbers), EIA (WR numbers): inner sizes in mm, TE10 cutoff c/2a, usual EIA band
 
 const SOURCE_A = 'sizes, band and cutoff seen in a public selection chart';
 const SOURCE_B = 'from memory';

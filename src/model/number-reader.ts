@@ -7,7 +7,7 @@ import { DIMENSION_NAMES } from '../base/units.ts';
 import type { Point, Quantity, XY } from './job.ts';
 
 /** 'size' must be above zero, 'depth' zero or more, 'any' merely finite. */
-export type Range = 'size' | 'depth' | 'any';
+type Range = 'size' | 'depth' | 'any';
 
 const LARGEST_LENGTH_METRES = 1e6;
 const SMALLEST_LENGTH_METRES = 1e-12;

@@ -7,7 +7,7 @@ import type { Outline, XY } from './job.ts';
 type Ring = readonly XY[];
 
 /** Segments of a whole turn: the sagitta 1 - cos(pi/360) is 3.8e-5 of the radius; a multiple of four keeps the symmetry. */
-export const SEGMENTS_PER_TURN = 360;
+const SEGMENTS_PER_TURN = 360;
 const SAGITTA = 1e-4;
 /** Above 1/sin(half the corner) = 10 (corners under 11.5 deg) a mitre is cut off. */
 const MITRE_LIMIT = 10;
@@ -30,7 +30,7 @@ export function outlineArea(outline: Outline): number {
   return outline.reduce((sum, ring) => sum + signedArea(ring), 0);
 }
 
-export function orient(ring: Ring, counterClockwise: boolean): Ring {
+function orient(ring: Ring, counterClockwise: boolean): Ring {
   return signedArea(ring) > 0 === counterClockwise ? ring : ring.toReversed();
 }
 
@@ -145,7 +145,7 @@ export function countCrossings(points: readonly XY[], most: number): number {
   return count;
 }
 
-export function dropRepeats(points: readonly XY[]): XY[] {
+function dropRepeats(points: readonly XY[]): XY[] {
   return points.filter((p, k) => {
     const before = points[k - 1];
     return before === undefined || before[0] !== p[0] || before[1] !== p[1];

@@ -7,7 +7,7 @@ function isObject(value: unknown): value is Record<string, unknown> {
 }
 
 /** `after`, made of the pieces of `before` wherever the two are equal; `before` itself when they are equal throughout. */
-export function shareStructure<T>(before: unknown, after: T): T {
+function shareStructure<T>(before: unknown, after: T): T {
   if (Object.is(before, after)) return after;
   if (Array.isArray(before) && Array.isArray(after)) {
     const shared = after.map((item: unknown, k) => shareStructure(before[k], item));

@@ -1,7 +1,7 @@
 // Owns the form of the program's CSV files: RFC 4180, decimal points, header lines, names that no spreadsheet runs.
 // Must not know what the columns mean.
 
-export const LINE_BREAK = '\r\n';
+const LINE_BREAK = '\r\n';
 
 /** Digits below which a single-precision number never needs fewer, and above which it never needs more. */
 const FEWEST_DIGITS = 6;

@@ -13,7 +13,7 @@ export interface BuildingMaterialRow {
   readonly source: string;
 }
 
-export const STANDARD = 'Recommendation ITU-R P.2040 (effects of building materials), Table 3';
+// Recommendation ITU-R P.2040 (effects of building materials), Table 3
 
 const SOURCE_A =
   'from memory, then matched digit by digit with several public listings of Rec. ITU-R P.2040-2/-3, Table 3; the document itself was not read';

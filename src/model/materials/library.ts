@@ -142,7 +142,7 @@ export const MATERIALS: readonly LibraryMaterial[] = [
 
 const BY_ID: ReadonlyMap<string, LibraryMaterial> = new Map(MATERIALS.map((material) => [material.id, material]));
 
-export function makeOwnLibraryMaterial(own: OwnMaterial): LibraryMaterial {
+function makeOwnLibraryMaterial(own: OwnMaterial): LibraryMaterial {
   return {
     id: own.id,
     name: own.name,

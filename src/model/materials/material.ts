@@ -6,7 +6,7 @@ import type { Medium } from '../job.ts';
 
 export type MaterialGroup = 'space' | 'metal' | 'building material' | 'ground' | 'dielectric' | 'liquid' | 'own';
 
-export type MaterialLaw =
+type MaterialLaw =
   /** Perfect conductor. */
   | { readonly kind: 'perfect metal' }
   /** Good conductor of known conductivity, S/m: computed as a perfect one, its skin depth is told. */

@@ -80,7 +80,7 @@ export function setSideLength(points: readonly Point[], metres: readonly XY[], n
 }
 
 /** Where a line's thickness is measured: the middle of its first piece, and the unit normal there. */
-export function middleOfFirstPiece(points: readonly XY[]): { at: XY; normal: XY } {
+function middleOfFirstPiece(points: readonly XY[]): { at: XY; normal: XY } {
   const a = points[0] ?? [0, 0];
   const b = points.find((p) => p[0] !== a[0] || p[1] !== a[1]) ?? [a[0] + 1, a[1]];
   const length = Math.hypot(b[0] - a[0], b[1] - a[1]);
