@@ -8,7 +8,8 @@ export async function makeNodeSession(kernelUrl = new URL('./kernel/kernel.wasm'
   const kernel = await WebAssembly.compile(await readFile(kernelUrl));
   return makeSession({
     loadKernel: () => Promise.resolve(kernel),
-    yieldTurn: (milliseconds) => new Promise((resolve) => (milliseconds > 0 ? setTimeout(resolve, milliseconds) : setImmediate(resolve))),
+    yieldTurn: (milliseconds) =>
+      new Promise((resolve) => (milliseconds > 0 ? setTimeout(resolve, milliseconds) : setImmediate(resolve))),
     now: () => performance.now(),
   });
 }

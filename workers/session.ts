@@ -6,7 +6,17 @@ import { sampleField, type FrameQuantity } from '../src/engine/frame.ts';
 import { makePlan } from '../src/engine/plan.ts';
 import type { Job } from '../src/model/job.ts';
 import { resolveJob } from '../src/model/resolve-job.ts';
-import type { FieldFrame, FieldView, ProbeTrace, RunProgress, RunRecord, RunRole, SessionApi, SessionReport, StopReason } from './protocol.ts';
+import type {
+  FieldFrame,
+  FieldView,
+  ProbeTrace,
+  RunProgress,
+  RunRecord,
+  RunRole,
+  SessionApi,
+  SessionReport,
+  StopReason,
+} from './protocol.ts';
 import { openRun, type Run } from './run.ts';
 
 export interface SessionHost {
@@ -23,8 +33,8 @@ const SLICE_MILLISECONDS = 8;
 const ENERGY_EVERY = 256;
 /** Energy may not rise again after the drives have ended; this much above its lowest is no ripple. */
 const GROWTH_FACTOR = 4;
-/** Below this the energy is rounding noise, which may wander. */
-const ROUNDING_DB = -100;
+/** Below this a static field of charged metal may trade slowly with the absorber; a runaway passes it soon. */
+const RUNAWAY_DB = -30;
 
 export function makeSession(host: SessionHost): SessionApi {
   const session = new Session(host);
@@ -220,7 +230,7 @@ class Session implements SessionApi {
       }
       if (driven) {
         this.energyLowest = Math.min(this.energyLowest, energy);
-        if (energy > GROWTH_FACTOR * this.energyLowest && this.energyDb > ROUNDING_DB) {
+        if (energy > GROWTH_FACTOR * this.energyLowest && this.energyDb > RUNAWAY_DB) {
           this.trouble = `The energy rises again after the drives have ended (step ${run.step}): an absorbing edge feeds a resonance that stands close to it. Move the structure away from the edge, or make the absorbing edge deeper.`;
           this.finish('growing');
           return;

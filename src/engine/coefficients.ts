@@ -40,7 +40,12 @@ export function kernelScales(grid: Grid): { uScale: number; vScale: number; pace
   return { uScale: eOut ? 1 : ETA0, vScale: eOut ? ETA0 / h : 1 / h, pace: C0 * grid.dtSeconds * h };
 }
 
-export function makeCoefficients(grid: Grid, regions: readonly Region[], background: Medium, band: { fromHertz: number; toHertz: number }): Coefficients {
+export function makeCoefficients(
+  grid: Grid,
+  regions: readonly Region[],
+  background: Medium,
+  band: { fromHertz: number; toHertz: number },
+): Coefficients {
   const { x, y } = grid;
   const media = makeMediaRows(grid, regions, background);
   const metal = markMetal(grid, regions);
@@ -114,7 +119,11 @@ export function makeCoefficients(grid: Grid, regions: readonly Region[], backgro
 }
 
 /** Gives rows with the same metal the same number. */
-function classifyRows(masks: { uDead: Uint8Array; xBlocked: Uint8Array; yBlocked: Uint8Array }, nx: number, ny: number): Int32Array {
+function classifyRows(
+  masks: { uDead: Uint8Array; xBlocked: Uint8Array; yBlocked: Uint8Array },
+  nx: number,
+  ny: number,
+): Int32Array {
   const known = new Map<string, number>();
   const classes = new Int32Array(ny + 1);
   for (let j = 0; j <= ny; j++) {

@@ -135,7 +135,12 @@ function scanRow(a: number, b: number, share: number, xs: Float64Array, row: num
     const from = Math.max(left, xs[column]!);
     const to = Math.min(right, xs[column + 1]!);
     if (to <= from) continue;
-    leave(list, column, (share * (to - from)) / (right - left), (xs[column + 1]! - (from + to) / 2) / (xs[column + 1]! - xs[column]!));
+    leave(
+      list,
+      column,
+      (share * (to - from)) / (right - left),
+      (xs[column + 1]! - (from + to) / 2) / (xs[column + 1]! - xs[column]!),
+    );
   }
 }
 

@@ -75,7 +75,12 @@ export function estimateOf(
     cellsPerShortestWavelength,
     phaseErrorDegrees: phaseErrorDegrees(grid, job.band.toHertz),
     launch: launch?.words ?? null,
-    remarks: [...grid.remarks, ...resolutionRemarks(job, grid, cellsPerShortestWavelength), ...probeRemarks(job, grid, launches), ...more],
+    remarks: [
+      ...grid.remarks,
+      ...resolutionRemarks(job, grid, cellsPerShortestWavelength),
+      ...probeRemarks(job, grid, launches),
+      ...more,
+    ],
   };
 }
 
@@ -109,7 +114,9 @@ function resolutionRemarks(job: ResolvedJob, grid: Grid, cellsPerShortestWavelen
       code: 'part near cell size',
       path: part.id,
       message: `${part.name} is ${(part.smallestMetres * 1e3).toPrecision(3)} mm across, ${cells.toFixed(1)} cells of ${(cell * 1e3).toPrecision(3)} mm: ${
-        job.parts.some((other) => other.medium.metal) ? 'edges of metal are moved to the nearest grid line, so its width is rounded to whole cells' : 'it is averaged into its cells'
+        job.parts.some((other) => other.medium.metal)
+          ? 'edges of metal are moved to the nearest grid line, so its width is rounded to whole cells'
+          : 'it is averaged into its cells'
       }. Take smaller cells to resolve it.`,
     });
   }
@@ -124,9 +131,15 @@ function probeRemarks(job: ResolvedJob, grid: Grid, launches: ReadonlyMap<string
       const px = probe.at[0] + job.sheet.originMetres[0];
       const py = probe.at[1] + job.sheet.originMetres[1];
       const inside =
-        px >= x.position[launch.i0]! && px <= x.position[launch.i1]! && py >= y.position[launch.j0]! && py <= y.position[launch.j1]!;
+        px >= x.position[launch.i0]! &&
+        px <= x.position[launch.i1]! &&
+        py >= y.position[launch.j0]! &&
+        py <= y.position[launch.j1]!;
       // Over the full height the sides of the sheet are not faces.
-      const aside = launch.kind === 'full height' && (launch.faces[0] === 'left' || launch.faces[0] === 'right') ? px >= x.position[launch.i0]! && px <= x.position[launch.i1]! : py >= y.position[launch.j0]! && py <= y.position[launch.j1]!;
+      const aside =
+        launch.kind === 'full height' && (launch.faces[0] === 'left' || launch.faces[0] === 'right')
+          ? px >= x.position[launch.i0]! && px <= x.position[launch.i1]!
+          : py >= y.position[launch.j0]! && py <= y.position[launch.j1]!;
       if (launch.kind === 'box' ? inside : aside) continue;
       remarks.push({
         code: 'probe in scattered field',

@@ -28,7 +28,12 @@ export interface Feasible {
 
 export function checkFeasible(job: ResolvedJob, grid: Grid): Result<Feasible> {
   if (job.drives.length === 0) {
-    return fail({ code: 'no drive', path: 'drives', message: 'Nothing launches a wave.', hint: 'Add a plane wave or a line current.' });
+    return fail({
+      code: 'no drive',
+      path: 'drives',
+      message: 'Nothing launches a wave.',
+      hint: 'Add a plane wave or a line current.',
+    });
   }
   const launches = new Map<string, Launch>();
   for (const drive of job.drives) {

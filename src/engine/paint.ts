@@ -52,5 +52,7 @@ function rectangle(left: number, bottom: number, right: number, top: number) {
 }
 
 function toSteps(outline: Outline, origin: XY, unit: number): Paths64 {
-  return outline.map((ring) => ring.map(([x, y]) => ({ x: Math.round((x + origin[0]) / unit), y: Math.round((y + origin[1]) / unit) })));
+  return outline.map((ring) =>
+    ring.map(([x, y]) => ({ x: Math.round((x + origin[0]) / unit), y: Math.round((y + origin[1]) / unit) })),
+  );
 }

@@ -186,7 +186,14 @@ function writePlan(
   });
 }
 
-function fieldGeometry(grid: Grid, coefficients: Coefficients, uOffset: number, vxOffset: number, vyOffset: number, stride: number): FieldGeometry {
+function fieldGeometry(
+  grid: Grid,
+  coefficients: Coefficients,
+  uOffset: number,
+  vxOffset: number,
+  vyOffset: number,
+  stride: number,
+): FieldGeometry {
   const range = (axis: Grid['x']): [number, number] => {
     const low = axis.lines[axis.before]! - 1e-12;
     const high = axis.lines[axis.before + axis.cells]! + 1e-12;
@@ -272,7 +279,13 @@ function writeDrives(
     for (const term of makeFaceTerms(grid, launch, line)) {
       const row = coefficients.rowAt(term.j);
       const b = (term.field === 'u' ? row.bu : term.field === 'vx' ? row.bvx : row.bvy)[term.i]!;
-      points.push({ field: term.field, row: term.j, i: term.i, weight: term.sign * b * term.scale, source: { offset: offsetOf(term.from, term.entry) } });
+      points.push({
+        field: term.field,
+        row: term.j,
+        i: term.i,
+        weight: term.sign * b * term.scale,
+        source: { offset: offsetOf(term.from, term.entry) },
+      });
     }
     if (Math.abs(Math.sin(line.angleRadians - drive.angleRadians)) > 1e-6) {
       angleRemarks.push({
@@ -286,7 +299,14 @@ function writeDrives(
 }
 
 /** A current shared by straight-line weights among the u around it: u' -= bu vScale I, README.md equation 11. */
-function lineCurrentTerms(job: ResolvedJob, grid: Grid, coefficients: Coefficients, at: readonly [number, number], amplitude: number, table: number): PointTerm[] {
+function lineCurrentTerms(
+  job: ResolvedJob,
+  grid: Grid,
+  coefficients: Coefficients,
+  at: readonly [number, number],
+  amplitude: number,
+  table: number,
+): PointTerm[] {
   const columns = nodeShares(grid.x, at[0] + job.sheet.originMetres[0]);
   const rows = nodeShares(grid.y, at[1] + job.sheet.originMetres[1]);
   const terms: PointTerm[] = [];

@@ -80,7 +80,8 @@ export function chooseLaunch(job: ResolvedJob, grid: Grid, drive: PlaneWave): Re
 function boxLaunch(job: ResolvedJob, grid: Grid): Launch | string {
   const { edges, widthMetres, heightMetres, originMetres } = job.sheet;
   const open = (['left', 'right', 'bottom', 'top'] as const).filter((edge) => edges[edge] !== 'absorbing');
-  if (open.length > 0) return `The ${open.join(' and ')} ${open.length > 1 ? 'edges do' : 'edge does'} not absorb, so no total-field box fits.`;
+  if (open.length > 0)
+    return `The ${open.join(' and ')} ${open.length > 1 ? 'edges do' : 'edge does'} not absorb, so no total-field box fits.`;
   const marginX = (BOX_INSET + CLEARANCE) * grid.dxMetres;
   const marginY = (BOX_INSET + CLEARANCE) * grid.dyMetres;
   for (const part of job.parts) {
@@ -139,7 +140,13 @@ function fullHeightLaunch(
   const k = [...axis.position.keys()].filter((n) => (low ? axis.position[n]! > line - 1e-9 : axis.position[n]! < line + 1e-9));
   const edge = low ? k[0]! : k[k.length - 1]!;
   const all = { i0: 0, i1: grid.x.count - 1, j0: 0, j1: grid.y.count - 1 };
-  const total = horizontal ? (low ? { ...all, i0: edge } : { ...all, i1: edge }) : low ? { ...all, j0: edge } : { ...all, j1: edge };
+  const total = horizontal
+    ? low
+      ? { ...all, i0: edge }
+      : { ...all, i1: edge }
+    : low
+      ? { ...all, j0: edge }
+      : { ...all, j1: edge };
   return ok({
     kind: 'full height',
     words: `over the full ${horizontal ? 'height' : 'width'}, ${BOX_INSET} cells inside the ${entering} edge; behind that line only the reflected field is left`,
@@ -193,7 +200,13 @@ function wholeSteps(c: number, s: number): [number, number] {
   return [best[0] * Math.sign(c), best[1] * Math.sign(s)];
 }
 
-export function makeIncidentLine(job: ResolvedJob, grid: Grid, drive: PlaneWave, launch: Launch, waveform: Waveform): IncidentLine {
+export function makeIncidentLine(
+  job: ResolvedJob,
+  grid: Grid,
+  drive: PlaneWave,
+  launch: Launch,
+  waveform: Waveform,
+): IncidentLine {
   const { dxMetres, dyMetres } = grid;
   const c = Math.cos(drive.angleRadians);
   const s = Math.sin(drive.angleRadians);
@@ -243,7 +256,12 @@ export function makeIncidentLine(job: ResolvedJob, grid: Grid, drive: PlaneWave,
 }
 
 /** Values fed to the line at time t, into out[at .. at + fed). */
-export function feedInto(out: Float64Array, at: number, line: Pick<IncidentLine, 'fed' | 'amplitude' | 'delaySeconds' | 'waveform'>, t: number): void {
+export function feedInto(
+  out: Float64Array,
+  at: number,
+  line: Pick<IncidentLine, 'fed' | 'amplitude' | 'delaySeconds' | 'waveform'>,
+  t: number,
+): void {
   for (let r = 0; r < line.fed; r++) out[at + r] = line.amplitude * waveformAt(line.waveform, t - r * line.delaySeconds);
 }
 

@@ -85,7 +85,22 @@ export function writeRowPrograms(
       else statistics.mixedCells += cells;
     }
     const wrap = grid.x.repeats ? coefficients.rowAt(row).wrap : null;
-    offsets.push(writeRow({ image, state, coefficients, row, spans, strips, stripTables, inStripY, points: rowPoints, taps: tapsOfRow.get(row) ?? [], wrap, lastColumn: L.PAD_COLUMNS + grid.x.count - 1 }));
+    offsets.push(
+      writeRow({
+        image,
+        state,
+        coefficients,
+        row,
+        spans,
+        strips,
+        stripTables,
+        inStripY,
+        points: rowPoints,
+        taps: tapsOfRow.get(row) ?? [],
+        wrap,
+        lastColumn: L.PAD_COLUMNS + grid.x.count - 1,
+      }),
+    );
   }
   return { offsets, statistics };
 }
@@ -145,7 +160,7 @@ function makeSpans(image: ImageWriter, row: CoefficientRow, groups: number, work
   mergeLoss(classes);
 
   const spans: Span[] = [];
-  for (let g = 0; g < groups; ) {
+  for (let g = 0; g < groups;) {
     let end = g + 1;
     while (end < groups && classes[end] === classes[g]) end++;
     const name = classes[g]!;
@@ -170,7 +185,7 @@ function makeSpans(image: ImageWriter, row: CoefficientRow, groups: number, work
 
 /** A short plain run between array runs costs more to enter than its arrays. */
 function dissolveShortPlainRuns(classes: string[]): void {
-  for (let g = 0; g < classes.length; ) {
+  for (let g = 0; g < classes.length;) {
     let end = g + 1;
     while (end < classes.length && classes[end] === classes[g]) end++;
     if (classes[g]!.startsWith('plain') && end - g < LEAST_PLAIN_GROUPS) classes.fill('lossless', g, end);
@@ -180,7 +195,7 @@ function dissolveShortPlainRuns(classes: string[]): void {
 
 /** Neighbouring array runs of which one has loss become one lossy run when the lossless one is short. */
 function mergeLoss(classes: string[]): void {
-  for (let g = 0; g < classes.length; ) {
+  for (let g = 0; g < classes.length;) {
     let end = g + 1;
     while (end < classes.length && classes[end] === classes[g]) end++;
     const touchesLossy = classes[g - 1] === 'lossy' || classes[end] === 'lossy';

@@ -40,7 +40,16 @@ export function advanceImage(bytes: ArrayBuffer, steps: number): void {
   }
 }
 
-function passRow(views: Views, program: number, u: number, vx: number, vy: number, stride: number, sources: number, record: number): void {
+function passRow(
+  views: Views,
+  program: number,
+  u: number,
+  vx: number,
+  vy: number,
+  stride: number,
+  sources: number,
+  record: number,
+): void {
   const { i32, f32 } = views;
   let at = program + 1;
   for (let n = i32[program]!; n > 0; n--) {
@@ -114,7 +123,9 @@ function uTerms(views: Views, span: number, u0: number, vx0: number, vy0: number
   const psi = i32[span + L.SPAN_PSI_Y]! >> 2;
   if (psi !== 0) {
     for (let k = 0; k < count; k++) {
-      const next = f(f(f32[span + L.SPAN_Y_BU]! * f32[psi + k]!) + f(f32[span + L.SPAN_Y_CU]! * f(f32[vx + k + stride]! - f32[vx + k]!)));
+      const next = f(
+        f(f32[span + L.SPAN_Y_BU]! * f32[psi + k]!) + f(f32[span + L.SPAN_Y_CU]! * f(f32[vx + k + stride]! - f32[vx + k]!)),
+      );
       f32[psi + k] = next;
       f32[u + k] = f(f32[u + k]! - f(f32[bu + k]! * next));
     }
@@ -144,7 +155,9 @@ function vTerms(views: Views, span: number, u0: number, vx0: number, vy0: number
   if (i32[span + L.SPAN_PSI_Y] !== 0) {
     const psi = (i32[span + L.SPAN_PSI_Y]! >> 2) + count;
     for (let k = 0; k < count; k++) {
-      const next = f(f(f32[span + L.SPAN_Y_BV]! * f32[psi + k]!) + f(f32[span + L.SPAN_Y_CV]! * f(f32[u + k]! - f32[u + k - stride]!)));
+      const next = f(
+        f(f32[span + L.SPAN_Y_BV]! * f32[psi + k]!) + f(f32[span + L.SPAN_Y_CV]! * f(f32[u + k]! - f32[u + k - stride]!)),
+      );
       f32[psi + k] = next;
       f32[vx + k] = f(f32[vx + k]! - f(f32[bvx + k]! * next));
     }

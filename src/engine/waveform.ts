@@ -4,7 +4,13 @@ import type { ResolvedWaveform } from '../model/job.ts';
 
 /** A waveform ready to be evaluated: cloneable, amplitude 1 at its peak (samples as given). */
 export type Waveform =
-  | { readonly kind: 'band pulse'; readonly centreHertz: number; readonly widthSeconds: number; readonly delaySeconds: number; readonly scale: number }
+  | {
+      readonly kind: 'band pulse';
+      readonly centreHertz: number;
+      readonly widthSeconds: number;
+      readonly delaySeconds: number;
+      readonly scale: number;
+    }
   | { readonly kind: 'continuous wave'; readonly frequencyHertz: number; readonly startSeconds: number }
   | { readonly kind: 'damped step'; readonly riseSeconds: number; readonly decaySeconds: number; readonly scale: number }
   | { readonly kind: 'samples'; readonly times: readonly number[]; readonly values: readonly number[] };

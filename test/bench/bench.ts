@@ -6,6 +6,7 @@ import { makePlan } from '../../src/engine/plan.ts';
 import type { ResolvedJob } from '../../src/model/job.ts';
 import { openRun, type Run } from '../../workers/run.ts';
 import { benchJob, diagonalPart } from './bench-jobs.ts';
+import { watchedRate } from './live-view.ts';
 import { measureNative } from './native.ts';
 import { makePlainSheet, stepPlainSheet } from './plain-update.ts';
 
@@ -101,6 +102,9 @@ for (let k = 0; k < 4; k++) {
   small = Math.min(small, performance.now() - start);
 }
 add('200 x 100 cells, 4000 steps, spectrum of 201, end to end', small, 'ms', null);
+
+const unwatched = add('session, 1024 x 1024, unwatched', await watchedRate(0), 'Mcell/s', null);
+add('session, 30 frames a second of 1600 x 900', await watchedRate(30), 'Mcell/s', unwatched);
 
 if (process.argv.includes('--native')) {
   for (const size of [1024, 4096]) {

@@ -48,12 +48,18 @@ async function differences(job: ResolvedJob): Promise<{ differ: number; live: nu
   return { differ, live };
 }
 
-const disc = part('disc', { ...AIR, epsilonRelative: 4, muRelative: 1.5, sigma: 0.05, sigmaMagnetic: 20 }, regularPolygon([0.2, 0.1], 0.04, 60));
+const disc = part(
+  'disc',
+  { ...AIR, epsilonRelative: 4, muRelative: 1.5, sigma: 0.05, sigmaMagnetic: 20 },
+  regularPolygon([0.2, 0.1], 0.04, 60),
+);
 const wall = part('wall', METAL, rectangle(0.05, 0, 0.055, 0.08));
 const cases: Record<string, Partial<ResolvedJob>> = {
   'an open sheet': {},
   'lossy dielectric and metal': { parts: [disc, wall] },
-  'parts that run into the absorber': { parts: [part('block', { ...AIR, epsilonRelative: 3, sigma: 0.01 }, rectangle(0.1, -0.1, 0.4, 0.05))] },
+  'parts that run into the absorber': {
+    parts: [part('block', { ...AIR, epsilonRelative: 3, sigma: 0.01 }, rectangle(0.1, -0.1, 0.4, 0.05))],
+  },
   'repeating edges': { sheet: { ...resolvedJob().sheet, edges: edges('repeating') } },
   'magnetic and metal edges': { sheet: { ...resolvedJob().sheet, edges: edges('magnetic', 'metal', 'metal', 'magnetic') } },
   'a plane wave at an angle': {

@@ -53,15 +53,29 @@ describe('painting', () => {
 
   test('a later part hides what lies under it', () => {
     const regions = paintParts(
-      [part('a', { ...AIR, epsilonRelative: 2 }, rectangle(0, 0, 3, 3)), part('b', { ...AIR, epsilonRelative: 5 }, rectangle(1, 1, 4, 4))],
+      [
+        part('a', { ...AIR, epsilonRelative: 2 }, rectangle(0, 0, 3, 3)),
+        part('b', { ...AIR, epsilonRelative: 5 }, rectangle(1, 1, 4, 4)),
+      ],
       sheet,
     );
-    const areas = regions.map((region) => [region.medium.epsilonRelative, totalArea(fractions(region.rings as XY[][], 8, 8, 4, 4), 0.25)]);
-    expect(new Map(areas as [number, number][])).toEqual(new Map([[5, expect.closeTo(9, 6)], [2, expect.closeTo(5, 6)]]));
+    const areas = regions.map((region) => [
+      region.medium.epsilonRelative,
+      totalArea(fractions(region.rings as XY[][], 8, 8, 4, 4), 0.25),
+    ]);
+    expect(new Map(areas as [number, number][])).toEqual(
+      new Map([
+        [5, expect.closeTo(9, 6)],
+        [2, expect.closeTo(5, 6)],
+      ]),
+    );
   });
 
   test('air painted on metal cuts a hole in it', () => {
-    const regions = paintParts([part('plate', METAL, rectangle(1, 0, 2, 4)), part('slot', AIR, rectangle(0.5, 1, 2.5, 2))], sheet);
+    const regions = paintParts(
+      [part('plate', METAL, rectangle(1, 0, 2, 4)), part('slot', AIR, rectangle(0.5, 1, 2.5, 2))],
+      sheet,
+    );
     const metal = regions.find((region) => region.medium.metal);
     expect(totalArea(fractions(metal!.rings as XY[][], 8, 8, 4, 4), 0.25)).toBeCloseTo(3, 6);
   });

@@ -36,8 +36,15 @@ describe('a plane wave is launched', () => {
   });
 
   test('over the full height on a screen, between metal edges for H out of plane and magnetic ones for E', () => {
-    for (const [section, sides] of [['H out of plane', 'metal'], ['E out of plane', 'magnetic']] as const) {
-      const launch = launchOf(0, { section, parts: [door], sheet: { ...sheet, edges: edges('absorbing', 'absorbing', sides, sides) } });
+    for (const [section, sides] of [
+      ['H out of plane', 'metal'],
+      ['E out of plane', 'magnetic'],
+    ] as const) {
+      const launch = launchOf(0, {
+        section,
+        parts: [door],
+        sheet: { ...sheet, edges: edges('absorbing', 'absorbing', sides, sides) },
+      });
       expect(launch.ok && launch.value.kind).toBe('full height');
       expect(launch.ok && launch.value.faces).toEqual(['left']);
     }
@@ -47,7 +54,9 @@ describe('a plane wave is launched', () => {
     const faces = [0, 90, 180, 270, 450, -90].map((degrees) => {
       const along = degrees % 180 === 0;
       const screen = part('Screen', METAL, along ? rectangle(0.14, -1, 0.15, 1) : rectangle(-1, 0.1, 1, 0.11));
-      const sides = along ? edges('absorbing', 'absorbing', 'repeating', 'repeating') : edges('repeating', 'repeating', 'absorbing', 'absorbing');
+      const sides = along
+        ? edges('absorbing', 'absorbing', 'repeating', 'repeating')
+        : edges('repeating', 'repeating', 'absorbing', 'absorbing');
       const launch = launchOf(degrees, { parts: [screen], sheet: { ...sheet, edges: sides } });
       return launch.ok ? launch.value.faces[0] : refusal(launch);
     });
@@ -57,22 +66,30 @@ describe('a plane wave is launched', () => {
 
 describe('a plane wave is refused with the reason and the mend', () => {
   test('a screen that reaches absorbing edges', () => {
-    expect(refusal(launchOf(0, { parts: [door] }))).toMatch(/Door reaches the sheet's edge.*needs magnetic.*Make the bottom and top edges magnetic/);
+    expect(refusal(launchOf(0, { parts: [door] }))).toMatch(
+      /Door reaches the sheet's edge.*needs magnetic.*Make the bottom and top edges magnetic/,
+    );
   });
 
   test('a screen at an angle', () => {
-    expect(refusal(launchOf(20, { parts: [door] }))).toMatch(/at an angle can only be launched round bodies.*0, 90, 180 or 270 deg/);
+    expect(refusal(launchOf(20, { parts: [door] }))).toMatch(
+      /at an angle can only be launched round bodies.*0, 90, 180 or 270 deg/,
+    );
   });
 
   test('a closed entering edge', () => {
     const closed = { ...sheet, edges: edges('metal', 'absorbing', 'metal', 'metal') };
-    expect(refusal(launchOf(0, { section: 'H out of plane', parts: [door], sheet: closed }))).toMatch(/left edge, which is metal.*Make the left edge absorbing/);
+    expect(refusal(launchOf(0, { section: 'H out of plane', parts: [door], sheet: closed }))).toMatch(
+      /left edge, which is metal.*Make the left edge absorbing/,
+    );
   });
 
   test('a part where the wave is launched', () => {
     const near = part('Near', { ...AIR, epsilonRelative: 3 }, rectangle(0, 0, 0.05, 0.2));
     const between = { ...sheet, edges: edges('absorbing', 'absorbing', 'magnetic', 'magnetic') };
-    expect(refusal(launchOf(0, { parts: [near], sheet: between }))).toMatch(/Near stands where the wave is launched.*Leave at least 5 cells/);
+    expect(refusal(launchOf(0, { parts: [near], sheet: between }))).toMatch(
+      /Near stands where the wave is launched.*Leave at least 5 cells/,
+    );
   });
 
   test('a lossy background', () => {
@@ -92,13 +109,20 @@ describe('a job is refused', () => {
   });
 
   test('over the memory limit, with the numbers', () => {
-    const plan = makePlan(resolvedJob({ grid: { cells: { xMetres: 1e-5, yMetres: 1e-5 }, absorberCells: 10, courant: 0.99 } }), 'main');
+    const plan = makePlan(
+      resolvedJob({ grid: { cells: { xMetres: 1e-5, yMetres: 1e-5 }, absorberCells: 10, courant: 0.99 } }),
+      'main',
+    );
     expect(plan.ok ? null : plan.errors[0].message).toMatch(/needs \d+ MB for 30019 by 20019 cells; the limit is 1792 MB/);
   });
 });
 
 test('the reference plan keeps the grid and the launch of the main one', () => {
-  const job = resolvedJob({ section: 'H out of plane', parts: [door], sheet: { ...sheet, edges: edges('absorbing', 'absorbing', 'metal', 'metal') } });
+  const job = resolvedJob({
+    section: 'H out of plane',
+    parts: [door],
+    sheet: { ...sheet, edges: edges('absorbing', 'absorbing', 'metal', 'metal') },
+  });
   const main = makePlan(job, 'main');
   const reference = makePlan(job, 'reference');
   if (!main.ok || !reference.ok) throw new Error('no plan');

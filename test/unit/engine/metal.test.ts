@@ -43,7 +43,11 @@ describe('metal lies on the nearest grid lines', () => {
   });
 
   test('edges 0.4 cell off are moved back to their lines', () => {
-    for (const [from, to] of [[5.4, 7.4], [4.6, 6.6], [4.6, 7.4]] as const) {
+    for (const [from, to] of [
+      [5.4, 7.4],
+      [4.6, 6.6],
+      [4.6, 7.4],
+    ] as const) {
       const wanted = [Math.round(from), Math.round(to)];
       expect(deadColumns(wall(from, to)).filter((_, k, all) => k === 0 || k === all.length - 1)).toEqual(wanted);
       expect(blockedLines(wall(from, to)).filter((_, k, all) => k === 0 || k === all.length - 1)).toEqual(wanted);

@@ -10,7 +10,11 @@ function job(change: Record<string, unknown> = {}): Job {
     guidewall: 1,
     section: 'E out of plane',
     band: { from: '2 GHz', to: '6 GHz', points: 9, listed: ['3.3 GHz'] },
-    sheet: { width: '120 mm', height: '80 mm', edges: { left: 'absorbing', right: 'absorbing', bottom: 'absorbing', top: 'absorbing' } },
+    sheet: {
+      width: '120 mm',
+      height: '80 mm',
+      edges: { left: 'absorbing', right: 'absorbing', bottom: 'absorbing', top: 'absorbing' },
+    },
     grid: { cells: { x: '2 mm', y: '2 mm' } },
     drives: [{ id: 'd', kind: 'line current', at: ['40 mm', '40 mm'], amplitude: '1 A' }],
     probes: [{ id: 'p', at: ['90 mm', '45 mm'] }],
@@ -111,7 +115,15 @@ describe('a session', () => {
 
   test('a field that is no longer finite stops the run with step, place and cause', async () => {
     const wild = job({
-      drives: [{ id: 'd', kind: 'line current', at: ['40 mm', '40 mm'], amplitude: '1e30 A', waveform: { kind: 'samples', name: 'wild', times: [0, 1e-9], values: [1e9, 1e9] } }],
+      drives: [
+        {
+          id: 'd',
+          kind: 'line current',
+          at: ['40 mm', '40 mm'],
+          amplitude: '1e30 A',
+          waveform: { kind: 'samples', name: 'wild', times: [0, 1e-9], values: [1e9, 1e9] },
+        },
+      ],
     });
     const result = await runToEnd(await makeNodeSession(), wild, 'main');
     expect(result.ok && result.value.stopReason).toBe('not finite');
