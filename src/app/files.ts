@@ -13,6 +13,8 @@ import type { Example } from './examples.ts';
 import { exampleShelf } from './examples.ts';
 import { useJobStore } from './job-store.ts';
 import { tell, tellTrouble } from './notice-store.ts';
+import type { Samples } from './read-samples.ts';
+import { readSamples } from './read-samples.ts';
 import { runActions } from './run-controller.ts';
 import { useRunStore } from './run-store.ts';
 import { exportSheet } from './sheet-exporter.ts';
@@ -96,6 +98,23 @@ export async function saveJobFile(): Promise<void> {
   } catch (error) {
     if (!wasDismissed(error)) tellTrouble('The job file could not be written.', [reasonOf(error)]);
   }
+}
+
+/** Asks for a CSV file of drive samples; null when the person chose none or it could not be read, which is then told. */
+export async function openSamples(): Promise<{ readonly name: string; readonly samples: Samples } | null> {
+  try {
+    const file = await fileOpen({
+      description: 'Samples',
+      mimeTypes: ['text/csv', 'text/plain'],
+      extensions: ['.csv', '.txt', '.tsv'],
+    });
+    const samples = readSamples(await file.text());
+    if (samples.ok) return { name: file.name, samples: samples.value };
+    tellTrouble(`${file.name} holds no samples that can be played.`, samples.errors);
+  } catch (error) {
+    if (!wasDismissed(error)) tellTrouble('The file could not be read.', [reasonOf(error)]);
+  }
+  return null;
 }
 
 function download(blob: Blob, name: string): void {

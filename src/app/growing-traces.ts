@@ -18,7 +18,8 @@ export class GrowingTraces {
     if (first === undefined) return;
     const at = Math.min(report.sinceStep, this.count);
     const added = first.samples[0].length;
-    const same = this.traces.length === report.traces.length && this.traces.every((trace, p) => trace.probeId === report.traces[p]?.probeId);
+    const same =
+      this.traces.length === report.traces.length && this.traces.every((trace, p) => trace.probeId === report.traces[p]?.probeId);
     const end = at + added;
     if (!same || this.room() < end) this.makeRoom(report.traces, end, same);
     for (const [p, trace] of report.traces.entries()) {

@@ -44,6 +44,11 @@ export class ReferenceRun {
     this.settle('running', null);
     const result = await this.run(job, turn);
     if (turn !== this.turn || result === null) return;
+    if (result.ok && result.value.trouble !== null) {
+      this.job = null;
+      this.errors = [{ code: 'not finite', message: `The reference run broke: ${result.value.trouble}` }];
+      return this.settle('failed', null);
+    }
     if (!result.ok) {
       this.job = null;
       this.errors = result.errors;

@@ -14,12 +14,12 @@ export function Cautions() {
           <Dialog.Title>Limits and cautions</Dialog.Title>
           <h3>What is computed</h3>
           <p>
-            A two-dimensional model of an idealised section: everything drawn runs on without end out of the page. Real slots
-            end, real enclosures have corners, and cables run out of the plane; none of them is in the answer.
+            A two-dimensional model of an idealised section: everything drawn runs on without end out of the page. Real slots end,
+            real enclosures have corners, and cables run out of the plane; none of them is in the answer.
           </p>
           <p>
-            Metal is perfect metal: the loss of its skin is left out. A material that varies with frequency is taken at the
-            centre of the band. Numbers marked as typical are no substitute for the data sheet of the batch at hand.
+            Metal is perfect metal: the loss of its skin is left out. A material that varies with frequency is taken at the centre
+            of the band. Numbers marked as typical are no substitute for the data sheet of the batch at hand.
           </p>
           <p>
             The insertion ratio is the field at a point over the field at that point in the reference run. It is neither the
@@ -41,8 +41,8 @@ export function Cautions() {
           </ul>
           <h3>Conventions</h3>
           <p>
-            exp(+jωt) and peak values throughout, SI units. Coordinates are measured from the origin of the sheet, x to the
-            right, y up. Spectra are integrals of the record without a window.
+            exp(+jωt) and peak values throughout, SI units. Coordinates are measured from the origin of the sheet, x to the right,
+            y up. Spectra are integrals of the record without a window.
           </p>
           <h3>What leaves this machine</h3>
           <p>Nothing. Jobs, runs and readings stay in this browser until you save or export them.</p>

@@ -34,7 +34,7 @@ function FinderList({ examples, onDone }: { readonly examples: readonly Example[
   };
   return (
     <Command label="Find a command" loop>
-      <Command.Input placeholder="What shall be done?" autoFocus />
+      <Command.Input placeholder="What shall be done?" />
       <Command.List>
         <Command.Empty>No command is called that. Try another word for it.</Command.Empty>
         {GROUPS.map((group) => (

@@ -3,7 +3,15 @@
 import { DropdownMenu } from 'radix-ui';
 import type { ReactNode } from 'react';
 import type { Example } from '../../app/examples.ts';
-import { exportSheetPicture, exportSpectrum, exportTimeSeries, openExample, openJobFile, saveJobFile, startNewJob } from '../../app/files.ts';
+import {
+  exportSheetPicture,
+  exportSpectrum,
+  exportTimeSeries,
+  openExample,
+  openJobFile,
+  saveJobFile,
+  startNewJob,
+} from '../../app/files.ts';
 import { useJobStore } from '../../app/job-store.ts';
 import { useRunStore } from '../../app/run-store.ts';
 import { useViewStore } from '../../app/view-store.ts';
@@ -47,14 +55,15 @@ export function Header({ examples }: { readonly examples: readonly Example[] }) 
 function SavedState() {
   const saved = useJobStore((state) => state.saved);
   return (
-    <span className="soft saved-state" data-state={saved} role="status">
+    <output className="soft saved-state" data-state={saved}>
       {saved}
-    </span>
+    </output>
   );
 }
 
 function UndoRedo() {
-  const { undo, redo } = useJobStore.getState();
+  const undo = useJobStore((state) => state.undo);
+  const redo = useJobStore((state) => state.redo);
   const undoLabel = useJobStore((state) => state.undoLabel);
   const redoLabel = useJobStore((state) => state.redoLabel);
   return (

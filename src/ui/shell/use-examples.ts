@@ -9,9 +9,11 @@ export function useExamples(): readonly Example[] {
   const [examples, setExamples] = useState<readonly Example[]>([]);
   useEffect(() => {
     let gone = false;
-    void exampleShelf.examples().then((list) => {
+    const read = async (): Promise<void> => {
+      const list = await exampleShelf.examples();
       if (!gone && list.ok) setExamples(list.value);
-    });
+    };
+    void read();
     return () => {
       gone = true;
     };
