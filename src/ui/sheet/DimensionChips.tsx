@@ -2,7 +2,7 @@
 // Must not know how dimensions are drawn or measured.
 import { useEffect, useRef, useState, type KeyboardEvent, type ReactElement } from 'react';
 import { useJobStore } from '../../app/job-store.ts';
-import { describeError } from '../../base/result.ts';
+import type { AppError } from '../../base/result.ts';
 import { setDimension } from '../../model/parts/registry.ts';
 import { withUnit, type DimensionChip } from './sheet-overlay.ts';
 import { findPart } from './things.ts';
@@ -83,6 +83,6 @@ function writeDimension(chip: DimensionChip, text: string): string | null {
   return done.ok ? null : inWords(done.errors[0]);
 }
 
-function inWords(error: Parameters<typeof describeError>[0]): string {
+function inWords(error: AppError): string {
   return error.hint === undefined ? error.message : `${error.message} ${error.hint}`;
 }

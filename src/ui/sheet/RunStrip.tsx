@@ -1,6 +1,6 @@
 // Owns the run strip under the sheet: run, hold, step, pace, progress, and which field is shown how.
 // Must not know canvases, workers, or how a run is made.
-import { useState, type KeyboardEvent, type ReactElement } from 'react';
+import { useId, useState, type KeyboardEvent, type ReactElement } from 'react';
 import { useShallow } from 'zustand/react/shallow';
 import type { FieldView } from '../../../workers/protocol.ts';
 import { componentsOf } from '../../app/field-choice.ts';
@@ -43,7 +43,7 @@ function RunButtons(): ReactElement {
       >
         {action}
       </button>
-      <div className="group" role="group" aria-label="Time">
+      <fieldset className="group run-strip-group" aria-label="Time">
         <button
           type="button"
           className="plain-button"
@@ -63,7 +63,7 @@ function RunButtons(): ReactElement {
         >
           stop
         </button>
-      </div>
+      </fieldset>
     </>
   );
 }
@@ -113,16 +113,7 @@ function RunProgressLine(): ReactElement {
         <strong>{time}</strong> <span className="soft">{words.map((word) => `· ${word} `)}</span>
       </div>
       <div className="run-strip-under">
-        <div
-          className="run-strip-bar"
-          role="progressbar"
-          aria-label="Progress of the run"
-          aria-valuemin={0}
-          aria-valuemax={100}
-          aria-valuenow={Math.round(100 * share)}
-        >
-          <div style={{ transform: `scaleX(${share})` }} />
-        </div>
+        <progress className="run-strip-bar" aria-label="Progress of the run" max={1} value={share} />
         <PaceChoice />
       </div>
     </div>
@@ -166,30 +157,16 @@ function Choice<T extends string>(props: {
   write: (value: T) => string;
 }): ReactElement {
   const { label, chosen, of, choose, write } = props;
-  const onKeyDown = (event: KeyboardEvent<HTMLDivElement>): void => {
-    const by = { ArrowRight: 1, ArrowDown: 1, ArrowLeft: -1, ArrowUp: -1 }[event.key];
-    const next = by === undefined ? undefined : of[(of.indexOf(chosen) + by + of.length) % of.length];
-    if (next === undefined) return;
-    event.preventDefault();
-    choose(next);
-    event.currentTarget.querySelectorAll<HTMLButtonElement>('button')[of.indexOf(next)]?.focus();
-  };
+  const name = useId();
   return (
-    <div className="group" role="radiogroup" aria-label={label} onKeyDown={onKeyDown}>
+    <fieldset className="group run-strip-group" aria-label={label}>
       {of.map((value) => (
-        <button
-          key={value}
-          type="button"
-          role="radio"
-          className="plain-button"
-          aria-checked={value === chosen}
-          tabIndex={value === chosen ? 0 : -1}
-          onClick={() => choose(value)}
-        >
+        <label key={value} className="plain-button run-strip-choice">
+          <input type="radio" className="hidden-visually" name={name} checked={value === chosen} onChange={() => choose(value)} />
           {write(value)}
-        </button>
+        </label>
       ))}
-    </div>
+    </fieldset>
   );
 }
 

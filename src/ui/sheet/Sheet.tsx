@@ -1,36 +1,27 @@
 // Owns the sheet as a component: its canvases, the controller behind them, and the chrome over them.
 // Must not know how things are drawn, tools, or workers.
-import { useEffect, useRef, useState, useSyncExternalStore, type MouseEvent, type ReactElement } from 'react';
+import { useEffect, useRef, useState, useSyncExternalStore, type ReactElement } from 'react';
 import { registerSheetExporter } from '../../app/sheet-exporter.ts';
 import { useViewStore } from '../../app/view-store.ts';
 import { DimensionChips } from './DimensionChips.tsx';
 import { makePalette, type Palette } from './palette.ts';
 import { SheetController } from './sheet-controller.ts';
-import { attachSheetEvents, placeIn } from './sheet-events.ts';
+import { attachSheetEvents } from './sheet-events.ts';
 import { EMPTY_OVERLAY } from './sheet-overlay.ts';
 import { SheetMenu } from './SheetMenu.tsx';
 import { TypedValues } from './TypedValues.tsx';
 import './sheet.css';
 
-const SECONDARY_BUTTON = 2;
-
 export function Sheet(): ReactElement {
   const host = useRef<HTMLDivElement>(null);
-  const canvases = {
-    field: useRef<HTMLCanvasElement>(null),
-    drawing: useRef<HTMLCanvasElement>(null),
-    marks: useRef<HTMLCanvasElement>(null),
-  };
+  const fieldCanvas = useRef<HTMLCanvasElement>(null);
+  const drawingCanvas = useRef<HTMLCanvasElement>(null);
+  const marksCanvas = useRef<HTMLCanvasElement>(null);
   const [controller, setController] = useState<SheetController | null>(null);
   const fieldPlace = useViewStore((state) => state.fieldPlace);
 
   useEffect(() => {
-    const [element, field, drawing, marks] = [
-      host.current,
-      canvases.field.current,
-      canvases.drawing.current,
-      canvases.marks.current,
-    ];
+    const [element, field, drawing, marks] = [host.current, fieldCanvas.current, drawingCanvas.current, marksCanvas.current];
     if (element === null || field === null || drawing === null || marks === null) return;
     const made = new SheetController(
       { field, drawing, marks },
@@ -49,29 +40,24 @@ export function Sheet(): ReactElement {
       for (const end of endings) end();
       setController(null);
     };
-    // The refs never change; the controller lives as long as the canvases.
   }, []);
 
-  const openMenu = (event: MouseEvent): void => {
-    const element = host.current;
-    const byPointer = event.button === SECONDARY_BUTTON && element !== null;
-    controller?.openMenu(byPointer ? placeIn(element, event) : null);
-  };
+  const focusSheet = (): void => host.current?.focus();
   return (
-    <SheetMenu controller={controller} focusSheet={() => host.current?.focus()}>
+    <SheetMenu controller={controller} focusSheet={focusSheet}>
       <div
         ref={host}
         className="sheet"
         role="application"
         aria-label="Sheet: the cross-section, drawn to scale. Tab goes through the things on it, arrows move the selected one, the menu key adds."
+        // oxlint-disable-next-line jsx-a11y/no-noninteractive-tabindex -- an application takes keys, so it must take focus
         tabIndex={0}
         data-field={fieldPlace}
-        onContextMenu={openMenu}
       >
-        <canvas ref={canvases.field} className="sheet-field" />
-        <canvas ref={canvases.drawing} className="sheet-drawing" />
-        <canvas ref={canvases.marks} className="sheet-marks" />
-        {controller === null ? null : <Chrome controller={controller} focusSheet={() => host.current?.focus()} />}
+        <canvas ref={fieldCanvas} className="sheet-field" />
+        <canvas ref={drawingCanvas} className="sheet-drawing" />
+        <canvas ref={marksCanvas} className="sheet-marks" />
+        {controller === null ? null : <Chrome controller={controller} focusSheet={focusSheet} />}
       </div>
     </SheetMenu>
   );
@@ -87,7 +73,11 @@ function Chrome({ controller, focusSheet }: { controller: SheetController; focus
     <>
       <DimensionChips chips={overlay.chips} editing={overlay.editing} edit={edit} />
       {overlay.typed === null ? null : <TypedValues typed={overlay.typed} />}
-      {overlay.hint === null ? null : <div className="sheet-hint">{overlay.hint}</div>}
+      {overlay.hint === null ? null : (
+        <div className="sheet-hint" data-trouble={overlay.troubled}>
+          {overlay.hint}
+        </div>
+      )}
       <div className="sheet-readout num" data-chrome>
         {overlay.readout === null ? (
           <span className="soft">x · y</span>
@@ -97,9 +87,7 @@ function Chrome({ controller, focusSheet }: { controller: SheetController; focus
           </>
         )}
       </div>
-      <div className="hidden-visually" role="status" aria-live="polite">
-        {overlay.said}
-      </div>
+      <output className="hidden-visually">{overlay.said}</output>
     </>
   );
 }

@@ -5,7 +5,7 @@ import type { SheetOverlay } from './sheet-overlay.ts';
 
 export function TypedValues({ typed }: { typed: NonNullable<SheetOverlay['typed']> }): ReactElement {
   return (
-    <div className="sheet-typed" style={{ left: typed.x + 16, top: typed.y + 16 }}>
+    <div className="sheet-typed" style={{ left: typed.x, top: typed.y }}>
       {typed.fields.map((field, index) => (
         <div key={field.name} data-active={index === typed.active}>
           <span className="soft">{field.name}</span>

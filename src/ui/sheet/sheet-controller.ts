@@ -3,21 +3,14 @@
 import { latestFrame, setFrameLimits, subscribeFrame } from '../../app/frame-channel.ts';
 import { useJobStore } from '../../app/job-store.ts';
 import { useViewStore, type Tool } from '../../app/view-store.ts';
+import type { AppError } from '../../base/result.ts';
 import type { ResolvedJob, XY } from '../../model/job.ts';
 import { rememberScale, type ScaleMemory } from './field-picture.ts';
 import { sheetBox } from './layers/edges-layer.ts';
 import type { FieldScale } from './layers/scale-layer.ts';
 import { placeDimensions, type PlacedDimension } from './layers/selection-layer.ts';
 import type { Palette } from './palette.ts';
-import {
-  describeSelection,
-  EMPTY_OVERLAY,
-  hintOf,
-  makeChips,
-  makeReadout,
-  placeTyped,
-  type SheetOverlay,
-} from './sheet-overlay.ts';
+import { EMPTY_OVERLAY, makeOverlay, type SheetOverlay } from './sheet-overlay.ts';
 import type { Marks } from './sheet-painter.ts';
 import { makePicture } from './sheet-picture.ts';
 import { makeStage, type Canvases, type FieldShown, type Stage } from './stage.ts';
@@ -60,6 +53,10 @@ export class SheetController {
   #editing: number | null = null;
   #scaleMemory: ScaleMemory | null = null;
   #overlay: SheetOverlay = EMPTY_OVERLAY;
+  /** Ids before the last edit, to tell what it made. */
+  #idsBefore: ReadonlySet<string> = new Set();
+  /** Why the last edit made here was refused. */
+  #refusal: AppError | null = null;
   #request = 0;
 
   constructor(canvases: Canvases, palette: Palette, onCursor: (cursor: string) => void) {
@@ -136,6 +133,7 @@ export class SheetController {
     this.#lastModifiers = modifiers;
     if (kind === 'press') {
       this.#gesture++;
+      this.#refusal = null;
       this.editDimension(null);
     }
     this.#feed({ kind, at, ...modifiers });
@@ -223,8 +221,9 @@ export class SheetController {
       const before = this.#resolved?.sheet;
       const { sheet } = resolved.value;
       this.#resolved = resolved.value;
-      const resized = before?.widthMetres !== sheet.widthMetres || before.heightMetres !== sheet.heightMetres;
-      if (resized) this.fit();
+      const [x, y] = sheet.originMetres;
+      const same = before?.widthMetres === sheet.widthMetres && before.heightMetres === sheet.heightMetres;
+      if (!same || before.originMetres[0] !== x || before.originMetres[1] !== y) this.fit();
     }
     this.#spoil('field', 'drawing', 'marks');
   }
@@ -283,7 +282,8 @@ export class SheetController {
     switch (action.do) {
       case 'edit': {
         this.#idsBefore = new Set(thingIds(useJobStore.getState().job));
-        useJobStore.getState().dispatch(action.command, action.policy);
+        const done = useJobStore.getState().dispatch(action.command, action.policy);
+        this.#refusal = done.ok ? null : done.errors[0];
         return;
       }
       case 'bail':
@@ -300,8 +300,6 @@ export class SheetController {
         return this.editDimension(0);
     }
   }
-
-  #idsBefore: ReadonlySet<string> = new Set();
 
   #hover(at: XY): void {
     if (this.#view === null || this.#resolved === null) return;
@@ -358,7 +356,7 @@ export class SheetController {
     const { selection } = useViewStore.getState();
     const { job } = useJobStore.getState();
     const part = selection.length === 1 && this.#tool.kind === 'select' ? findPart(job, selection[0]) : null;
-    return part === null ? [] : placeDimensions(part, job, view);
+    return part === null ? [] : placeDimensions(part, job, view, this.#size);
   }
 
   #marks(dimensions: readonly PlacedDimension[]): Marks | null {
@@ -370,6 +368,7 @@ export class SheetController {
       selection,
       hovered,
       dimensions,
+      handles: this.#tool.kind === 'select',
       preview: this.#step?.preview ?? null,
       snap: this.#step?.snap ?? null,
       cursor: this.#cursor,
@@ -379,20 +378,23 @@ export class SheetController {
   }
 
   #tellOverlay(view: Viewport, resolved: ResolvedJob, dimensions: readonly PlacedDimension[]): void {
-    const { job } = useJobStore.getState();
-    const { selection } = useViewStore.getState();
-    const part = findPart(job, selection[0]);
-    const snap = this.#step?.snap ?? null;
-    const typed = this.#step?.typed ?? null;
-    const at = typed?.at ?? snap?.at ?? this.#cursor;
-    this.#overlay = {
-      chips: part === null ? [] : makeChips(part, dimensions),
+    const store = useJobStore.getState();
+    const broken = store.resolved.ok ? null : store.resolved.errors[0];
+    this.#overlay = makeOverlay({
+      job: store.job,
+      resolved,
+      selection: useViewStore.getState().selection,
+      view,
+      size: this.#size,
+      dimensions,
       editing: this.#editing,
-      typed: typed === null ? null : placeTyped(typed, view),
-      readout: at === null ? null : makeReadout(at, view.pixelsPerMetre),
-      hint: hintOf(this.#tool, snap),
-      said: describeSelection(job, resolved, selection),
-    };
+      tool: this.#tool,
+      typed: this.#step?.typed ?? null,
+      snap: this.#step?.snap ?? null,
+      cursor: this.#cursor,
+      refusal: this.#refusal,
+      broken,
+    });
     for (const listener of this.#listeners) listener();
   }
 }

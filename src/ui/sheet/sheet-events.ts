@@ -7,6 +7,7 @@ import { readWheel } from './wheel.ts';
 type Fingers = Map<number, { readonly x: number; readonly y: number }>;
 
 const MIDDLE_BUTTON = 1;
+const SECONDARY_BUTTON = 2;
 
 /** Listens until the answer is called. Events on fields and buttons over the canvas are left alone. */
 export function attachSheetEvents(host: HTMLElement, controller: SheetController): () => void {
@@ -26,10 +27,18 @@ export function attachSheetEvents(host: HTMLElement, controller: SheetController
     },
     { signal, passive: false },
   );
+  // The menu itself is the chrome's; here it is only told where. The menu key comes without the button.
+  host.addEventListener(
+    'contextmenu',
+    (event) => {
+      if (!onChrome(event)) controller.openMenu(event.button === SECONDARY_BUTTON ? placeIn(host, event) : null);
+    },
+    { signal },
+  );
   return () => ending.abort();
 }
 
-export function placeIn(host: HTMLElement, event: { clientX: number; clientY: number }): { x: number; y: number } {
+function placeIn(host: HTMLElement, event: { clientX: number; clientY: number }): { x: number; y: number } {
   const box = host.getBoundingClientRect();
   return { x: event.clientX - box.left, y: event.clientY - box.top };
 }
@@ -53,6 +62,7 @@ function listenToPointers(host: HTMLElement, controller: SheetController, signal
       if (onChrome(event)) return;
       const at = placeIn(host, event);
       host.focus({ preventScroll: true });
+      if (event.button === SECONDARY_BUTTON) return;
       host.setPointerCapture(event.pointerId);
       if (event.pointerType === 'touch') fingers.set(event.pointerId, at);
       const pans = event.button === MIDDLE_BUTTON || host.dataset['space'] === 'down';
@@ -87,7 +97,16 @@ function listenToPointers(host: HTMLElement, controller: SheetController, signal
     } else if (!several && event.button === 0 && !onChrome(event)) controller.pointer('release', at.x, at.y, modifiersOf(event));
   };
   host.addEventListener('pointerup', lift, { signal });
-  host.addEventListener('pointercancel', lift, { signal });
+  host.addEventListener(
+    'pointercancel',
+    (event) => {
+      fingers.delete(event.pointerId);
+      panning = null;
+      delete host.dataset['panning'];
+      controller.key('Escape', modifiersOf(event));
+    },
+    { signal },
+  );
   host.addEventListener('pointerleave', () => controller.pointerLeft(), { signal });
   host.addEventListener(
     'dblclick',
@@ -118,13 +137,11 @@ function listenToKeys(host: HTMLElement, controller: SheetController, signal: Ab
     (event) => {
       if (event.target !== host) return;
       host.dataset['keys'] = 'yes';
-      if (event.key === ' ') {
-        host.dataset['space'] = 'down';
-        event.preventDefault();
-        return;
-      }
       controller.modifiersChanged(modifiersOf(event));
-      if (!controller.key(event.key, modifiersOf(event))) return;
+      const taken = controller.key(event.key, modifiersOf(event));
+      // A space that is not part of a typed quantity holds the sheet for panning.
+      if (!taken && event.key === ' ') host.dataset['space'] = 'down';
+      if (!taken && event.key !== ' ') return;
       event.preventDefault();
       event.stopPropagation();
     },

@@ -1,6 +1,7 @@
 // Owns what the chrome over the canvas shows: numbers of dimensions, the typing box, the coordinates, words for the ear.
 // Must not know React, the DOM, stores, or how anything is drawn.
 import { formatQuantity } from '../../base/quantity.ts';
+import { describeError, type AppError } from '../../base/result.ts';
 import type { Job, Part, ResolvedJob, XY } from '../../model/job.ts';
 import type { PlacedDimension } from './layers/selection-layer.ts';
 import { roundTo, type Snap } from './snap.ts';
@@ -8,7 +9,7 @@ import { findPart, nameOf } from './things.ts';
 import { snapStep, tidyLength } from './ticks.ts';
 import type { ToolState } from './tools/reduce-tool.ts';
 import type { TypedBox } from './tools/tool.ts';
-import { toScreen, type Viewport } from './viewport.ts';
+import { FOOT_HEIGHT, toScreen, type Size, type Viewport } from './viewport.ts';
 
 /** The number of a dimension, in CSS pixels of the canvas. */
 export interface DimensionChip {
@@ -28,14 +29,64 @@ export interface SheetOverlay {
   readonly editing: number | null;
   readonly typed: (TypedBox & { readonly x: number; readonly y: number }) | null;
   readonly readout: { readonly x: string; readonly y: string } | null;
+  /** What the tool waits for, or what is wrong. */
   readonly hint: string | null;
+  readonly troubled: boolean;
   /** Selection in words, for the live region. */
   readonly said: string;
 }
 
-export const EMPTY_OVERLAY: SheetOverlay = { chips: [], editing: null, typed: null, readout: null, hint: null, said: '' };
+export const EMPTY_OVERLAY: SheetOverlay = {
+  chips: [],
+  editing: null,
+  typed: null,
+  readout: null,
+  hint: null,
+  troubled: false,
+  said: '',
+};
 
-export function makeChips(part: Part, placed: readonly PlacedDimension[]): readonly DimensionChip[] {
+export interface OverlayInput {
+  readonly job: Job;
+  readonly resolved: ResolvedJob;
+  readonly selection: readonly string[];
+  readonly view: Viewport;
+  readonly size: Size;
+  readonly dimensions: readonly PlacedDimension[];
+  readonly editing: number | null;
+  readonly tool: ToolState;
+  readonly typed: TypedBox | null;
+  readonly snap: Snap | null;
+  readonly cursor: XY | null;
+  /** Why the last edit made on the sheet was refused. */
+  readonly refusal: AppError | null;
+  /** Why the job has no numbers just now: the last good drawing stands, and that must be said. */
+  readonly broken: AppError | null;
+}
+
+export function makeOverlay(input: OverlayInput): SheetOverlay {
+  const { job, resolved, selection, view, size, typed, snap, refusal, broken } = input;
+  const part = findPart(job, selection[0]);
+  const at = typed?.at ?? snap?.at ?? input.cursor;
+  const hint = hintOf(input.tool, snap);
+  const trouble =
+    refusal === null
+      ? broken === null
+        ? null
+        : `The last good drawing is shown. ${describeError(broken)}`
+      : describeError(refusal);
+  return {
+    chips: part === null ? [] : makeChips(part, input.dimensions),
+    editing: input.editing,
+    typed: typed === null ? null : placeTyped(typed, view, size),
+    readout: at === null ? null : makeReadout(at, view.pixelsPerMetre),
+    hint: trouble ?? hint,
+    troubled: trouble !== null,
+    said: trouble ?? hint ?? describeSelection(job, resolved, selection),
+  };
+}
+
+function makeChips(part: Part, placed: readonly PlacedDimension[]): readonly DimensionChip[] {
   return placed.map(({ dimension, text, label: [x, y] }) => {
     const written = ownText(part, dimension.path);
     const plain = written === null || /^[-+]?[\d.]+\s*[a-zµ°]+$/i.test(written);
@@ -62,19 +113,24 @@ export function withUnit(text: string, before: string): string {
   return unit !== undefined && /^\s*[-+]?(\d+\.?\d*|\.\d+)\s*$/.test(text) ? `${text.trim()} ${unit}` : text;
 }
 
-export function placeTyped(typed: TypedBox, view: Viewport): SheetOverlay['typed'] {
-  const [x, y] = toScreen(view, typed.at);
-  return { ...typed, x, y };
+const TYPED_ROOM: Size = { width: 190, height: 96 };
+
+/** Below and to the right of the cursor, or on the other side where there is no room. */
+function placeTyped(typed: TypedBox, view: Viewport, size: Size): SheetOverlay['typed'] {
+  const [atX, atY] = toScreen(view, typed.at);
+  const x = atX + 16 + TYPED_ROOM.width > size.width ? atX - 16 - TYPED_ROOM.width : atX + 16;
+  const y = atY + 16 + TYPED_ROOM.height > size.height - FOOT_HEIGHT ? atY - TYPED_ROOM.height : atY + 16;
+  return { ...typed, x: Math.max(0, x), y: Math.max(0, y) };
 }
 
 /** Coordinates to a tenth of the snapping grid, finer than a pixel. */
-export function makeReadout(at: XY, pixelsPerMetre: number): SheetOverlay['readout'] {
+function makeReadout(at: XY, pixelsPerMetre: number): SheetOverlay['readout'] {
   const step = snapStep(pixelsPerMetre) / 10;
   return { x: tidyLength(roundTo(at[0], step)), y: tidyLength(roundTo(at[1], step)) };
 }
 
 /** What the tool in hand waits for, in one line; nothing while selecting. */
-export function hintOf(state: ToolState, snap: Snap | null): string | null {
+function hintOf(state: ToolState, snap: Snap | null): string | null {
   const met = snap?.words === undefined || snap.words === null ? '' : ` · at the ${snap.words}`;
   switch (state.kind) {
     case 'select':
@@ -99,7 +155,7 @@ function capital(text: string): string {
 }
 
 /** For those who hear the sheet: what is selected and where it is. */
-export function describeSelection(job: Job, resolved: ResolvedJob, selection: readonly string[]): string {
+function describeSelection(job: Job, resolved: ResolvedJob, selection: readonly string[]): string {
   const [first] = selection;
   if (first === undefined) return '';
   if (selection.length > 1) return `${selection.length} things selected: ${selection.map((id) => nameOf(job, id)).join(', ')}.`;

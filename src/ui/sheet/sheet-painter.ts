@@ -47,6 +47,8 @@ export interface Marks {
   readonly selection: readonly string[];
   readonly hovered: string | null;
   readonly dimensions: readonly PlacedDimension[];
+  /** Handles show only while they can be taken. */
+  readonly handles: boolean;
   readonly preview: Preview | null;
   readonly snap: Snap | null;
   readonly cursor: XY | null;
@@ -61,7 +63,7 @@ export function paintMarks(surface: Surface, marks: Marks): void {
   if (hovered !== null && !selection.includes(hovered)) drawMark(surface, resolved, hovered, 'hovered');
   for (const id of selection) drawMark(surface, resolved, id, 'selected');
   drawDimensions(surface, marks.dimensions);
-  const only = selection.length === 1 ? findPart(job, selection[0]) : null;
+  const only = marks.handles && selection.length === 1 ? findPart(job, selection[0]) : null;
   if (only !== null) drawHandles(surface, only, job);
   if (marks.preview !== null) drawPreview(surface, marks.preview, job);
   if (marks.snap !== null) drawSnap(surface, marks.snap);
@@ -70,7 +72,7 @@ export function paintMarks(surface: Surface, marks: Marks): void {
 }
 
 /** Materials on the sheet, each once, in painting order. */
-export function makeLegend(job: Job, resolved: ResolvedJob): readonly LegendEntry[] {
+function makeLegend(job: Job, resolved: ResolvedJob): readonly LegendEntry[] {
   const entries = new Map<string, LegendEntry>();
   for (const part of resolved.parts) {
     const name = findMaterial(job, part.materialId)?.name ?? part.materialId;

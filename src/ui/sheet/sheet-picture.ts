@@ -66,7 +66,7 @@ export function makePicture(request: PictureRequest): Promise<Blob> {
 }
 
 /** A field laid over the drawing leaves it readable: paper-coloured places change nothing. */
-export function blendOver(theme: Palette['theme']): 'multiply' | 'screen' {
+function blendOver(theme: Palette['theme']): 'multiply' | 'screen' {
   return theme === 'light' ? 'multiply' : 'screen';
 }
 
@@ -83,7 +83,7 @@ function drawHead(context: LayerContext, { job, palette, size, shown, madeAt }: 
 }
 
 /** "Hz at t = 3.42 ns, step 2964 · drawn 2026-03-01 14:05 UTC". */
-export function headNote(frame: FieldFrame | null, madeAt: Date): string {
+function headNote(frame: FieldFrame | null, madeAt: Date): string {
   const stamp = `drawn ${madeAt.toISOString().slice(0, 16).replace('T', ' ')} UTC`;
   if (frame === null) return stamp;
   return `${frame.view} at t = ${formatQuantity(frame.timeSeconds, 'time', 4)}, step ${frame.step} · ${stamp}`;

@@ -79,9 +79,3 @@ export function tidyLength(metres: number): Quantity {
   const unit = size >= 0.99e-6 && size < 10 ? millimetres : unitForStep(size);
   return `${Number((metres / unit.metres).toPrecision(9))} ${unit.name}`;
 }
-
-/** An angle to the thousandth of a degree: "30 deg". */
-export function tidyAngle(radians: number): Quantity {
-  const degrees = Math.round((radians * 180 * 1000) / Math.PI) / 1000;
-  return `${degrees === 0 ? 0 : degrees} deg`;
-}

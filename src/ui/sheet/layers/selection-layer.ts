@@ -7,7 +7,7 @@ import { listDimensions, listHandles, rulesOf } from '../../../model/parts/regis
 import type { PartDimension } from '../../../model/parts/part-kind.ts';
 import type { Snap } from '../snap.ts';
 import type { Preview } from '../tools/tool.ts';
-import { boxToScreen, toScreen, type Viewport } from '../viewport.ts';
+import { boxToScreen, FOOT_HEIGHT, RULER_LEFT, RULER_TOP, toScreen, type Size, type Viewport } from '../viewport.ts';
 import { SANS, strokeSegment, traceOutline, type Surface } from './context.ts';
 import { LINE_CURRENT_RADIUS_PIXELS, planeWaveFront } from './drives-layer.ts';
 import { sheetBox } from './edges-layer.ts';
@@ -76,25 +76,58 @@ export interface PlacedDimension {
 /** Dimensions narrower than this on screen have their number beside, not on, the line. */
 const NARROW_PIXELS = 64;
 
-export function placeDimensions(part: Part, job: Job, view: Viewport): readonly PlacedDimension[] {
+/** Sides shorter than this on screen are not measured: zoomed in, they are. */
+const LEAST_PIXELS = 12;
+
+/** Room a number takes; one that would cover another is left out until there is room. */
+const NUMBER_ROOM: Size = { width: 66, height: 22 };
+
+export function placeDimensions(part: Part, job: Job, view: Viewport, size: Size): readonly PlacedDimension[] {
   const dimensions = listDimensions(part, job.values);
   const middle = middleOf(dimensions.flatMap((d) => [toScreen(view, d.from), toScreen(view, d.to)]));
-  return dimensions.map((dimension) => {
-    const [a, b] = [toScreen(view, dimension.from), toScreen(view, dimension.to)];
-    const text = formatQuantity(dimension.value, dimension.dimension, 6);
-    const length = Math.hypot(b[0] - a[0], b[1] - a[1]);
-    const radial = dimension.path === 'radius' || dimension.path === 'inner' || dimension.path === 'outer';
-    const along: XY = length === 0 ? [1, 0] : [(b[0] - a[0]) / length, (b[1] - a[1]) / length];
-    const aside = radial ? 0 : DIMENSION_OFFSET + UPRIGHT_OFFSET * Math.abs(along[1]);
-    const out = outward(a, b, along, middle);
-    const [from, to]: [XY, XY] = [
-      [a[0] + out[0] * aside, a[1] + out[1] * aside],
-      [b[0] + out[0] * aside, b[1] + out[1] * aside],
-    ];
-    const beside = length < NARROW_PIXELS;
-    const label: XY = beside ? [to[0] + along[0] * 34, to[1] + along[1] * 22] : [(from[0] + to[0]) / 2, (from[1] + to[1]) / 2];
-    return { dimension, text, from, to, feet: [a, b], label };
-  });
+  const placed: PlacedDimension[] = [];
+  for (const dimension of dimensions) {
+    const next = placeDimension(dimension, middle, view, size);
+    const side = dimension.path.startsWith('points');
+    const short = Math.hypot(next.to[0] - next.from[0], next.to[1] - next.from[1]) < LEAST_PIXELS;
+    const covered = placed.some(
+      ({ label }) =>
+        Math.abs(label[0] - next.label[0]) < NUMBER_ROOM.width && Math.abs(label[1] - next.label[1]) < NUMBER_ROOM.height,
+    );
+    if (!(side && short) && !covered) placed.push(next);
+  }
+  return placed;
+}
+
+function placeDimension(dimension: PartDimension, middle: XY, view: Viewport, size: Size): PlacedDimension {
+  const [a, b] = [toScreen(view, dimension.from), toScreen(view, dimension.to)];
+  const text = formatQuantity(dimension.value, dimension.dimension, 6);
+  const length = Math.hypot(b[0] - a[0], b[1] - a[1]);
+  const along: XY = length === 0 ? [1, 0] : [(b[0] - a[0]) / length, (b[1] - a[1]) / length];
+  const radial = ['radius', 'inner', 'outer'].includes(dimension.path) || dimension.dimension === 'angle';
+  const aside = radial ? 0 : DIMENSION_OFFSET + UPRIGHT_OFFSET * Math.abs(along[1]);
+  const out = outward(a, b, along, middle);
+  const from: XY = [a[0] + out[0] * aside, a[1] + out[1] * aside];
+  const to: XY = [b[0] + out[0] * aside, b[1] + out[1] * aside];
+  const beside = length < NARROW_PIXELS;
+  const label: XY = beside ? [to[0] + along[0] * 34, to[1] + along[1] * 22] : middleOfSeen(from, to, size);
+  return { dimension, text, from, to, feet: [a, b], label };
+}
+
+/** The middle of what is seen of a line: a long wall keeps its number in view when the person looks at one end. */
+function middleOfSeen(from: XY, to: XY, size: Size): XY {
+  const low: XY = [RULER_LEFT + NUMBER_ROOM.width / 2, RULER_TOP + NUMBER_ROOM.height / 2];
+  const high: XY = [size.width - NUMBER_ROOM.width / 2, size.height - FOOT_HEIGHT - NUMBER_ROOM.height / 2];
+  let [enter, leave] = [0, 1];
+  for (const axis of [0, 1] as const) {
+    const step = to[axis] - from[axis];
+    if (step === 0) continue;
+    const [t, u] = [(low[axis] - from[axis]) / step, (high[axis] - from[axis]) / step];
+    enter = Math.max(enter, Math.min(t, u));
+    leave = Math.min(leave, Math.max(t, u));
+  }
+  const t = enter < leave ? (enter + leave) / 2 : 0.5;
+  return [from[0] + t * (to[0] - from[0]), from[1] + t * (to[1] - from[1])];
 }
 
 function middleOf(points: readonly XY[]): XY {

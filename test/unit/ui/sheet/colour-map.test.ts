@@ -188,7 +188,7 @@ describe('automatic scale', () => {
   });
 
   test('a pulse smaller than one cell in a hundred is still seen', () => {
-    const values = new Array<number>(10_000).fill(0);
+    const values = Array.from({ length: 10_000 }, () => 0);
     values[77] = 5;
     expect(strongLevel(frame(values, 100))).toBe(1);
   });

@@ -56,6 +56,16 @@ describe('drawing a wall', () => {
     });
   });
 
+  test('a space belongs to the quantity once typing has begun, and to the page before', () => {
+    const hand = draw('wall');
+    hand.click(mm(20, 60));
+    hand.type(' ');
+    expect(hand.last?.handled).toBe(false);
+    hand.type('3 ');
+    expect(hand.last?.handled).toBe(true);
+    expect(hand.last?.typed?.fields[0]?.text).toBe('3 ');
+  });
+
   test('a named value can be typed', () => {
     const hand = draw('wall');
     hand.click(mm(20, 60));

@@ -1,6 +1,6 @@
 // Owns the facts of fitting, panning and zooming, of wheels and pads, of rulers and tidy lengths.
 import { describe, expect, test } from 'vitest';
-import { makeRuler, snapStep, stepAtLeast, ticksBetween, tidyAngle, tidyLength } from '../../../../src/ui/sheet/ticks.ts';
+import { makeRuler, snapStep, stepAtLeast, ticksBetween, tidyLength } from '../../../../src/ui/sheet/ticks.ts';
 import {
   boxToScreen,
   fitView,
@@ -123,10 +123,5 @@ describe('tidy quantities', () => {
     [2.5e-7, '250 nm'],
   ])('%d m is written %s', (metres, text) => {
     expect(tidyLength(metres)).toBe(text);
-  });
-
-  test('angles are written in degrees', () => {
-    expect(tidyAngle(Math.PI / 6)).toBe('30 deg');
-    expect(tidyAngle(-1e-9)).toBe('0 deg');
   });
 });
