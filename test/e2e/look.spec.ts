@@ -1,0 +1,52 @@
+// Owns the checks of how the bench looks and reads: accessibility rules, and pictures kept for people to judge.
+// Must not know how it is styled.
+import { readFileSync } from 'node:fs';
+import { createRequire } from 'node:module';
+import { expect, test } from './bench.ts';
+
+const AXE = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
+
+interface AxeWindow {
+  readonly axe: { run(options: object): Promise<{ violations: { id: string; help: string; nodes: { html: string }[] }[] }> };
+}
+
+const SIZES = [
+  { name: 'desk', width: 1440, height: 900 },
+  { name: 'laptop', width: 1280, height: 720 },
+  { name: 'narrow', width: 820, height: 1180 },
+];
+
+for (const theme of ['light', 'dark'] as const) {
+  test(`the bench keeps the rules of accessibility in the ${theme} theme`, async ({ bench, page }) => {
+    await page.emulateMedia({ reducedMotion: 'reduce' });
+    await bench.waitForEnd();
+    if (theme === 'dark') await page.getByRole('button', { name: 'Turn to dark' }).click();
+    // Evaluated by the browser's own tools, which the page's policy on scripts does not bind.
+    await page.evaluate(AXE);
+    const violations = await page.evaluate(async () => {
+      const { axe } = window as unknown as AxeWindow;
+      const { violations: found } = await axe.run({ runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'] });
+      return found.map(({ id, help, nodes }) => ({ id, help, nodes: nodes.map(({ html }) => html.slice(0, 200)) }));
+    });
+    expect(violations).toEqual([]);
+  });
+
+  for (const { name, width, height } of SIZES) {
+    test(`a picture of the solved example is kept: ${theme}, ${name}`, async ({ bench, page }) => {
+      await page.setViewportSize({ width, height });
+      if (theme === 'dark') await page.getByRole('button', { name: 'Turn to dark' }).click();
+      await bench.waitForEnd();
+      await page.waitForTimeout(500);
+      const picture = await page.screenshot({ path: `artifacts/bench-${theme}-${name}.png` });
+      expect(picture.byteLength).toBeGreaterThan(20_000);
+    });
+  }
+}
+
+test('the page does not scroll sideways at any of the sizes', async ({ bench, page }) => {
+  await bench.waitForEnd();
+  for (const { width, height } of SIZES) {
+    await page.setViewportSize({ width, height });
+    expect(await page.evaluate(() => document.documentElement.scrollWidth), `${width} pixels wide`).toBeLessThanOrEqual(width);
+  }
+});
