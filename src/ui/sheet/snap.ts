@@ -153,6 +153,13 @@ export function constrainAngle(from: XY, to: XY, step: number): XY {
   return polar(from, length, angle);
 }
 
+/** `to` moved along its direction from `from` so that their distance is a whole number of steps, at least one. */
+export function roundReach(from: XY, to: XY, step: number): XY {
+  const [dx, dy] = [to[0] - from[0], to[1] - from[1]];
+  const reach = Math.hypot(dx, dy);
+  return reach === 0 ? to : polar(from, Math.max(step, roundTo(reach, step)), Math.atan2(dy, dx));
+}
+
 export function polar(from: XY, length: number, angle: number): XY {
   // A right angle must not leave 1e-17 behind.
   const quarter = Math.round(angle / (Math.PI / 2));

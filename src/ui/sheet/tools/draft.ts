@@ -3,7 +3,7 @@
 import { formatQuantity } from '../../../base/quantity.ts';
 import type { Part, PartKind, Point, XY } from '../../../model/job.ts';
 import { makePart } from '../../../model/new-job.ts';
-import { constrainAngle, polar, roundTo } from '../snap.ts';
+import { constrainAngle, polar, roundTo, roundReach, type Snap } from '../snap.ts';
 import { snapStep, stepAtLeast, tidyLength } from '../ticks.ts';
 import type { ToolContext } from './tool.ts';
 import { readTyped, type TypedKind, type TypedState, type TypedValue } from './typed-values.ts';
@@ -13,6 +13,8 @@ export interface Draft {
   readonly points: readonly XY[];
   /** Where the pointer (or the arrow keys) stands, snapped. */
   readonly cursor: XY;
+  /** What the cursor met; null when it was set by keys. */
+  readonly snap: Snap | null;
   readonly typed: TypedState;
   readonly shift: boolean;
 }
@@ -104,7 +106,8 @@ export function targetOf(draft: Draft, context: ToolContext): XY {
     case 'ring': {
       const typed = typedAt(draft, 0, context);
       const angle = Math.atan2(cursor[1] - last[1], cursor[0] - last[0]);
-      return typed.kind === 'value' ? polar(last, typed.value, angle) : cursor;
+      if (typed.kind === 'value') return polar(last, typed.value, angle);
+      return draft.snap?.kind === 'point' ? cursor : roundReach(last, cursor, snapStep(context.pixelsPerMetre));
     }
   }
 }

@@ -1,7 +1,7 @@
 // Owns drawing a new part: points set by pointer, by typed sizes or by arrow keys, until the part is done.
 // Must not know the DOM, stores, or how things are drawn.
 import type { PartKind, XY } from '../../../model/job.ts';
-import { makeSnapTargets, roundTo, snapTo, type Snap } from '../snap.ts';
+import { makeSnapTargets, roundTo, snapTo } from '../snap.ts';
 import { snapStep } from '../ticks.ts';
 import { fieldsOf, findProblem, isLine, liveValues, partOf, samePlace, targetOf, type Draft } from './draft.ts';
 import { simplifyPath } from './simplify-path.ts';
@@ -16,7 +16,6 @@ const STROKE_TOLERANCE_PIXELS = 1;
 
 export interface DrawState extends Draft {
   readonly kind: 'draw';
-  readonly snap: Snap | null;
   /** Where the button went down, while it is down. */
   readonly pressedAt: XY | null;
   /** True once arrow keys have moved the cursor: Enter then sets a point there. */

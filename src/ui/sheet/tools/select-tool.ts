@@ -2,7 +2,7 @@
 // Must not know the DOM, stores, or how things are drawn.
 import type { Part, XY } from '../../../model/job.ts';
 import { dragHandle, listHandles } from '../../../model/parts/registry.ts';
-import { makeSnapTargets, roundTo, snapTo, type Snap, type SnapTargets } from '../snap.ts';
+import { makeSnapTargets, polar, roundReach, roundTo, snapTo, type Snap, type SnapTargets } from '../snap.ts';
 import { canMove, findPart, keyPoints, nearestOf, thingAt, thingIds, thingsInBox } from '../things.ts';
 import { snapStep } from '../ticks.ts';
 import { arrowShift, RECORD, type Preview, type ToolAction, type ToolContext, type ToolInput, type ToolStep } from './tool.ts';
@@ -164,9 +164,23 @@ function shiftWanted(anchor: XY, [dx, dy]: XY, snap: Snap, step: number): XY {
 /** Always from the part as it was pressed, so that no rounding piles up on the way. */
 function resize(gesture: Gesture & { kind: 'resizing' }, input: Pointer, context: ToolContext): Step {
   const snap = snapTo(input.at, gesture.targets, context.pixelsPerMetre, input.alt);
-  const item = dragHandle(gesture.part, gesture.handle, snap.at[0], snap.at[1], context.job.values);
+  const [x, y] = snap.kind === 'point' ? snap.at : tidyHandle(gesture, snap.at, input, context);
+  const item = dragHandle(gesture.part, gesture.handle, x, y, context.job.values);
   const policy = { kind: 'join', key: gesture.key } as const;
   return step(gesture, [{ do: 'edit', command: { do: 'put', item }, policy }], { cursor: 'grabbing', snap });
+}
+
+const ONE_DEGREE = Math.PI / 180;
+
+/** Radii go by whole steps of the grid, angles by whole degrees (15 with Shift), whatever the direction of the hand. */
+function tidyHandle(gesture: Gesture & { kind: 'resizing' }, at: XY, { shift, alt }: Pointer, context: ToolContext): XY {
+  const centre = listHandles(gesture.part, context.job.values).find((handle) => handle.name === 'centre')?.at;
+  if (centre === undefined) return at;
+  const step = snapStep(context.pixelsPerMetre);
+  if (['radius', 'inner', 'outer'].includes(gesture.handle)) return roundReach(centre, at, alt ? step / 10 : step);
+  if (gesture.handle !== 'from' && gesture.handle !== 'to') return at;
+  const [dx, dy] = [at[0] - centre[0], at[1] - centre[1]];
+  return polar(centre, Math.hypot(dx, dy), roundTo(Math.atan2(dy, dx), shift ? 15 * ONE_DEGREE : ONE_DEGREE));
 }
 
 function band(gesture: Gesture & { kind: 'banding' }, context: ToolContext): Step {

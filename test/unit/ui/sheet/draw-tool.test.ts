@@ -208,6 +208,13 @@ describe('drawing shapes', () => {
     expect(hand.job.parts.at(-1)).toMatchObject({ kind: 'disc', centre: ['20 mm', '60 mm'], radius: '(a/3)' });
   });
 
+  test('a disc drawn aslant has a radius of whole steps of the grid', () => {
+    const hand = draw('disc');
+    hand.click(mm(30, 60));
+    hand.click(mm(45, 70));
+    expect(hand.job.parts.at(-1)).toMatchObject({ kind: 'disc', radius: '20 mm' });
+  });
+
   test('a ring has half its outer radius as inner one unless that is typed', () => {
     const hand = draw('ring');
     hand.click(mm(20, 60));

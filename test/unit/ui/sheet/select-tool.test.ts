@@ -169,6 +169,22 @@ describe('editing', () => {
     expect(hand.job.parts[2]).toEqual(makeTestJob().parts[2]);
   });
 
+  test('a handle does not stick to the corner it comes from', () => {
+    const hand = new Hand(makeTestJob());
+    hand.click(INSIDE_BOARD);
+    hand.press(mm(180, 30));
+    hand.move(mm(183.2, 30));
+    expect(hand.job.parts[2]).toMatchObject({ to: ['185 mm', '30 mm'] });
+  });
+
+  test('a radius dragged aslant is still a whole step of the grid', () => {
+    const hand = new Hand(makeTestJob());
+    hand.job = { ...hand.job, parts: hand.job.parts.map((part) => (part.kind === 'disc' ? { ...part, radius: '10 mm' } : part)) };
+    hand.click(INSIDE_ROD);
+    hand.drag(mm(130, 50), mm(134, 59));
+    expect(hand.job.parts[1]).toMatchObject({ centre: ['120 mm', '50 mm'], radius: '20 mm' });
+  });
+
   test('Delete removes what is selected', () => {
     const hand = new Hand(makeTestJob());
     hand.click(INSIDE_ROD);
