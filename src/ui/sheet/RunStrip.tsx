@@ -162,7 +162,7 @@ function Choice<T extends string>(props: {
     <fieldset className="group run-strip-group" aria-label={label}>
       {of.map((value) => (
         <label key={value} className="plain-button run-strip-choice">
-          <input type="radio" className="hidden-visually" name={name} checked={value === chosen} onChange={() => choose(value)} />
+          <input type="radio" name={name} checked={value === chosen} onChange={() => choose(value)} />
           {write(value)}
         </label>
       ))}

@@ -44,19 +44,19 @@ const STOP_WORDS: Record<StopReason, string> = {
   growing: 'stopped: the energy rises again',
 };
 
-/** First the time, then the rest in falling order of interest. */
+/** First the time, then why it ended, then the rest in falling order of interest: a narrow strip cuts the end off. */
 export function progressWords(progress: RunProgress, estimate: Estimate | null): { time: string; rest: readonly string[] } {
   const time = formatQuantity(progress.timeSeconds, 'time', 4);
   if (progress.step === 0 && progress.state !== 'running')
     return { time, rest: estimate === null ? [] : estimateWords(estimate) };
   const of =
     progress.stepLimit > 0 ? ` of ${progress.state === 'done' ? 'at most' : 'about'} ${groupDigits(progress.stepLimit)}` : '';
-  const rest = [`step ${groupDigits(progress.step)}${of}`];
+  const ended = progress.stopReason === null ? [] : [STOP_WORDS[progress.stopReason]];
+  const rest = [...ended, `step ${groupDigits(progress.step)}${of}`];
   if (progress.megaCellsPerSecond > 0) rest.push(throughputWords(progress.megaCellsPerSecond));
   if (progress.state === 'running') rest.push(`${durationWords(progress.secondsLeft)} left`);
   rest.push(energyWords(progress.energyDb));
   if (progress.state === 'held') rest.push('held');
-  if (progress.stopReason !== null) rest.push(STOP_WORDS[progress.stopReason]);
   return { time, rest };
 }
 

@@ -27,7 +27,7 @@ describe('run strip', () => {
 
   test('the reason of the end is told in words', () => {
     const { rest } = progressWords({ ...RUNNING, state: 'done', stopReason: 'decayed' }, null);
-    expect(rest.at(-1)).toBe('ended: the energy has decayed');
+    expect(rest[0]).toBe('ended: the energy has decayed');
     expect(rest).not.toContain('0.2 s left');
   });
 
