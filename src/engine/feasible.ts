@@ -10,6 +10,8 @@ import { rowStride } from './row-program.ts';
 
 /** Steps in one call of the kernel: tables of drives and records are this long. */
 export const SLICE_STEPS = 256;
+/** Steps that run down the rows together while these are in cache. */
+export const BLOCK_STEPS = 8;
 /** Images larger than this are refused: a 32-bit address space with room for the page. */
 export const MEMORY_LIMIT_BYTES = 1.75 * 2 ** 30;
 
@@ -68,7 +70,8 @@ function boundOf(grid: Grid, job: ResolvedJob): Bound {
   const psi = 8 * (rows * stripColumns + (y.before + y.after + 4) * (stride + 64));
   const lines = job.drives.filter((drive) => drive.kind === 'plane wave').length;
   const longest = 40 * (x.count + y.count + 80);
-  const tables = SLICE_STEPS * (8 * job.drives.length + 12 * job.probes.length + lines * 8 * 41) + lines * 24 * longest;
+  const tables =
+    SLICE_STEPS * (8 * job.drives.length + 12 * job.probes.length + lines * 8 * 41) + lines * 24 * longest * (BLOCK_STEPS + 1);
   const state = align(4 * HEADER_WORDS + 12 * rows * stride + psi + tables + 4096);
   const arrays = job.parts.some((part) => part.kind !== 'rectangle') ? 24 * rows * stride : 0;
   return { state, total: state + arrays + rows * 512 };

@@ -16,6 +16,7 @@ export const H_LINES = 10; // incident lines
 export const H_LINE_TABLE = 11; // offset of the first line record
 export const H_WRAP_Y = 12; // 1 when bottom and top edges repeat
 export const H_SLICE = 13; // most steps in one call
+export const H_BLOCK = 14; // steps that follow each other down the rows while these are in cache
 export const HEADER_WORDS = 16;
 
 // Columns before the first unknown: u[-1] of the first column falls into zeros that nobody writes.
@@ -57,10 +58,11 @@ export const WRAP_WORDS = 4;
 // Point record: field[column] += weight * source, on fields of the row.
 export const POINT_FIELD = 0; // 0 u, 1 vx, 2 vy
 export const POINT_COLUMN = 1;
-export const POINT_SOURCE = 2; // SOURCE_TABLE: index of the source; else the offset of a float64
-export const POINT_FROM_TABLE = 3; // 1: source table, 0: a value in an incident line
-export const POINT_WEIGHT = 4; // float64, two words
-export const POINT_WORDS = 6;
+export const POINT_SOURCE = 2; // offset of a float64: in the source table at step 0 of the slice, or in an incident line at step 0 of the block
+export const POINT_STEP = 3; // bytes to the value of the next step
+export const POINT_FROM_TABLE = 4; // 1: source table, 0: incident line
+export const POINT_WEIGHT = 6; // float64, two words
+export const POINT_WORDS = 8;
 
 // Tap record: record[channel] += weight * field[column].
 export const TAP_FIELD = 0;
@@ -69,18 +71,20 @@ export const TAP_CHANNEL = 2;
 export const TAP_WEIGHT = 3; // float32
 export const TAP_WORDS = 4;
 
-// Incident line: a plane wave on the grid, u(i, j) = U[mx i + my j], stepped with the sheet's own coefficients.
+// Incident line: a plane wave on the grid, u(i, j) = U[mx i + my j], stepped with the sheet's own coefficients. Its levels
+// of a block stand side by side: level 0 is the state at the block's start, level n + 1 the state after step n.
 export const LINE_LENGTH = 0;
 export const LINE_MX = 1;
 export const LINE_MY = 2;
 export const LINE_FED = 3; // the first entries of U are given, not computed
-export const LINE_U = 4; // offsets of float64 arrays
+export const LINE_U = 4; // offsets of U, Vx, Vy at level 0: float64 arrays
 export const LINE_VX = 5;
 export const LINE_VY = 6;
-export const LINE_A = 7; // a and b per half entry (u at 2r, vx at 2r - my, vy at 2r - mx): the matched absorbing tail
-export const LINE_B = 8;
-export const LINE_FEED = 9; // offset of the feed table: float64 [step of the slice][LINE_FED]
+export const LINE_LEVEL = 7; // bytes from one level to the next
+export const LINE_A = 8; // a and b per half entry (u at 2r, vx at 2r - my, vy at 2r - mx): the matched absorbing tail
+export const LINE_B = 9;
 export const LINE_BU = 10; // float64, two words each
 export const LINE_BVX = 12;
 export const LINE_BVY = 14;
-export const LINE_WORDS = 16;
+export const LINE_FEED = 16; // offset of the feed table: float64 [step of the slice][LINE_FED]
+export const LINE_WORDS = 20;

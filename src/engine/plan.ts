@@ -6,8 +6,8 @@ import { makeCoefficients, type CoefficientRow, type Coefficients } from './coef
 import { estimateOf, type Estimate, type Remark } from './estimate.ts';
 import { makeGrid, type Grid } from './grid.ts';
 import { hashText } from './hash.ts';
-import { checkFeasible, SLICE_STEPS } from './feasible.ts';
-import { ImageWriter, StateRoom } from './image.ts';
+import { BLOCK_STEPS, checkFeasible, SLICE_STEPS } from './feasible.ts';
+import { align, ImageWriter, StateRoom } from './image.ts';
 import * as L from './layout.ts';
 import { paintParts } from './paint.ts';
 import { makeFaceTerms, makeIncidentLine, type IncidentLine, type Launch } from './plane-wave.ts';
@@ -133,10 +133,14 @@ function writePlan(
   const channels = 3 * job.probes.length;
   const recordOffset = state.take(4 * SLICE_STEPS * Math.max(1, channels));
 
-  const drives = writeDrives(job, grid, coefficients, launches, state, image);
+  const sourceCount = job.drives.filter((drive) => drive.kind === 'line current').length;
+  const sourceTableOffset = state.take(8 * SLICE_STEPS * Math.max(1, sourceCount));
+  const drives = writeDrives(job, grid, coefficients, launches, state, image, {
+    offset: sourceTableOffset,
+    stepBytes: 8 * sourceCount,
+  });
   if (!drives.ok) return drives;
   const { sources, feeds, points, lineTableOffset, lineCount, angleRemarks } = drives.value;
-  const sourceTableOffset = state.take(8 * SLICE_STEPS * Math.max(1, sources.length));
   const taps = job.probes.flatMap((probe, p) => makeProbeTaps(grid, probe.at, job.sheet.originMetres, p));
   const { offsets } = writeRowPrograms(image, state, grid, coefficients, points, taps);
   const rowTable = image.take(4 * offsets.length);
@@ -156,6 +160,8 @@ function writePlan(
   header[L.H_LINE_TABLE] = lineTableOffset;
   header[L.H_WRAP_Y] = y.repeats ? 1 : 0;
   header[L.H_SLICE] = SLICE_STEPS;
+  // A repeating top edge closes the loop of rows after every step.
+  header[L.H_BLOCK] = y.repeats ? 1 : BLOCK_STEPS;
 
   const fixed = image.finish();
   const imageBytes = stateBound + fixed.byteLength;
@@ -248,6 +254,7 @@ function writeDrives(
   launches: ReadonlyMap<string, Launch>,
   state: StateRoom,
   image: ImageWriter,
+  table: { readonly offset: number; readonly stepBytes: number },
 ): Result<DriveParts> {
   const sources: Waveform[] = [];
   const feeds: LineFeed[] = [];
@@ -258,7 +265,11 @@ function writeDrives(
   for (const drive of job.drives) {
     const waveform = makeWaveform(drive.waveform, job.band.fromHertz, job.band.toHertz);
     if (drive.kind === 'line current') {
-      const own = lineCurrentTerms(job, grid, coefficients, drive.at, drive.amplitude, sources.length);
+      const own = lineCurrentTerms(job, grid, coefficients, drive.at, drive.amplitude, {
+        from: 'table',
+        offset: table.offset + 8 * sources.length,
+        stepBytes: table.stepBytes,
+      });
       if (own.every((term) => term.weight === 0)) {
         return fail({
           code: 'drive in metal',
@@ -274,7 +285,7 @@ function writeDrives(
     const launch = launches.get(drive.id)!;
     const line = makeIncidentLine(job, grid, drive, launch, waveform);
     const record = lineTableOffset + 4 * L.LINE_WORDS * lineCount++;
-    const { feed, offsetOf } = writeLine(image, state, record, line);
+    const { feed, sourceOf } = writeLine(image, state, record, line);
     feeds.push(feed);
     for (const term of makeFaceTerms(grid, launch, line)) {
       const row = coefficients.rowAt(term.j);
@@ -284,7 +295,7 @@ function writeDrives(
         row: term.j,
         i: term.i,
         weight: term.sign * b * term.scale,
-        source: { offset: offsetOf(term.from, term.entry) },
+        source: sourceOf(term.from, term.entry),
       });
     }
     if (Math.abs(Math.sin(line.angleRadians - drive.angleRadians)) > 1e-6) {
@@ -305,7 +316,7 @@ function lineCurrentTerms(
   coefficients: Coefficients,
   at: readonly [number, number],
   amplitude: number,
-  table: number,
+  source: PointTerm['source'],
 ): PointTerm[] {
   const columns = nodeShares(grid.x, at[0] + job.sheet.originMetres[0]);
   const rows = nodeShares(grid.y, at[1] + job.sheet.originMetres[1]);
@@ -313,7 +324,7 @@ function lineCurrentTerms(
   for (const [j, wj] of rows) {
     for (const [i, wi] of columns) {
       const weight = -coefficients.rowAt(j).bu[i]! * coefficients.vScale * amplitude * wi * wj;
-      terms.push({ field: 'u', row: j, i, weight, source: { table } });
+      terms.push({ field: 'u', row: j, i, weight, source });
     }
   }
   return terms;
@@ -324,8 +335,10 @@ function writeLine(
   state: StateRoom,
   record: number,
   line: IncidentLine,
-): { feed: LineFeed; offsetOf: (field: 'u' | 'vx' | 'vy', entry: number) => number } {
-  const offsets = { u: state.take(8 * line.length), vx: state.take(8 * line.length), vy: state.take(8 * line.length) };
+): { feed: LineFeed; sourceOf: (field: 'u' | 'vx' | 'vy', entry: number) => PointTerm['source'] } {
+  const level = align(24 * line.length);
+  const start = state.take(level * (BLOCK_STEPS + 1));
+  const offsets = { u: start, vx: start + 8 * line.length, vy: start + 16 * line.length };
   const a = image.take(8 * line.a.length);
   const b = image.take(8 * line.b.length);
   image.doubles(a, line.a);
@@ -338,6 +351,7 @@ function writeLine(
   image.word(record, L.LINE_U, offsets.u);
   image.word(record, L.LINE_VX, offsets.vx);
   image.word(record, L.LINE_VY, offsets.vy);
+  image.word(record, L.LINE_LEVEL, level);
   image.word(record, L.LINE_A, a);
   image.word(record, L.LINE_B, b);
   image.word(record, L.LINE_FEED, tableOffset);
@@ -346,6 +360,11 @@ function writeLine(
   image.double(record, L.LINE_BVY, line.bvy);
   return {
     feed: { tableOffset, fed: line.fed, amplitude: line.amplitude, delaySeconds: line.delaySeconds, waveform: line.waveform },
-    offsetOf: (field, entry) => offsets[field] + 8 * entry,
+    // Terms on u take v of the level before the step, terms on v take u of the level after it.
+    sourceOf: (field, entry) => ({
+      from: 'line',
+      offset: offsets[field] + 8 * entry + (field === 'u' ? level : 0),
+      stepBytes: level,
+    }),
   };
 }

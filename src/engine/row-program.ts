@@ -12,8 +12,8 @@ export interface PointTerm {
   readonly row: number;
   readonly i: number;
   readonly weight: number;
-  /** A source of the table by index, or a value in an incident line by image offset. */
-  readonly source: { readonly table: number } | { readonly offset: number };
+  /** Where its value lies at step 0 (of the slice in the source table, of the block in a line), and bytes to the next step. */
+  readonly source: { readonly from: 'table' | 'line'; readonly offset: number; readonly stepBytes: number };
 }
 
 /** What a probe takes from one unknown of a row. */
@@ -277,8 +277,9 @@ function writeSpan(parts: RowParts, span: Span, at: number): void {
     const record = pointsAt + 4 * k * L.POINT_WORDS;
     image.word(record, L.POINT_FIELD, FIELD_NUMBER[point.field]);
     image.word(record, L.POINT_COLUMN, L.PAD_COLUMNS + point.i);
-    image.word(record, L.POINT_FROM_TABLE, 'table' in point.source ? 1 : 0);
-    image.word(record, L.POINT_SOURCE, 'table' in point.source ? point.source.table : point.source.offset);
+    image.word(record, L.POINT_FROM_TABLE, point.source.from === 'table' ? 1 : 0);
+    image.word(record, L.POINT_SOURCE, point.source.offset);
+    image.word(record, L.POINT_STEP, point.source.stepBytes);
     image.double(record, L.POINT_WEIGHT, point.weight);
   });
 }

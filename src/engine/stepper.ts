@@ -26,17 +26,21 @@ export function advanceImage(bytes: ArrayBuffer, steps: number): void {
   const lineTable = header(L.H_LINE_TABLE) >> 2;
   for (let step = 0; step < steps; step++) {
     const record = (header(L.H_RECORD) >> 2) + step * channels;
-    const sources = (header(L.H_SOURCE_TABLE) >> 3) + step * header(L.H_SOURCES);
     f32.fill(0, record, record + channels);
-    for (let k = 0; k < lines; k++) lineU(views, lineTable + k * L.LINE_WORDS, step);
+    for (let k = 0; k < lines; k++) stepLine(views, lineTable + k * L.LINE_WORDS, step);
     for (let j = 1; j <= rows; j++) {
       const at = j * stride;
       const wraps = header(L.H_WRAP_Y) === 1 && j === rows;
       if (wraps) f32.copyWithin(u + at, u + stride, u + 2 * stride);
-      passRow(views, i32[table + j]! >> 2, u + at, vx + at, vy + at, stride, sources, record);
+      passRow(views, i32[table + j]! >> 2, u + at, vx + at, vy + at, stride, record, step);
       if (wraps) f32.copyWithin(vx + stride, vx + at, vx + at + stride);
     }
-    for (let k = 0; k < lines; k++) lineV(views, lineTable + k * L.LINE_WORDS);
+    for (let k = 0; k < lines; k++) {
+      const line = lineTable + k * L.LINE_WORDS;
+      const from = i32[line + L.LINE_U]! >> 3;
+      const level = i32[line + L.LINE_LEVEL]! >> 3;
+      views.f64.copyWithin(from, from + level, from + 2 * level);
+    }
   }
 }
 
@@ -47,13 +51,13 @@ function passRow(
   vx: number,
   vy: number,
   stride: number,
-  sources: number,
   record: number,
+  step: number,
 ): void {
   const { i32, f32 } = views;
   let at = program + 1;
   for (let n = i32[program]!; n > 0; n--) {
-    passSpan(views, at, u, vx, vy, stride, sources);
+    passSpan(views, at, u, vx, vy, stride, step);
     at += L.SPAN_WORDS;
   }
   const first = i32[at + L.WRAP_FIRST]!;
@@ -74,7 +78,7 @@ function passRow(
   }
 }
 
-function passSpan(views: Views, span: number, u0: number, vx0: number, vy0: number, stride: number, sources: number): void {
+function passSpan(views: Views, span: number, u0: number, vx0: number, vy0: number, stride: number, step: number): void {
   const { i32, f32 } = views;
   const kind = i32[span + L.SPAN_KIND]!;
   const first = i32[span + L.SPAN_COLUMN]!;
@@ -91,7 +95,7 @@ function passSpan(views: Views, span: number, u0: number, vx0: number, vy0: numb
     const curl = f(f(f32[vy + k + 1]! - f32[vy + k]!) - f(f32[vx + k + stride]! - f32[vx + k]!));
     f32[u + k] = f(f(a * f32[u + k]!) + f(b * curl));
   }
-  if ((kind & L.WORKED) !== 0) uTerms(views, span, u0, vx0, vy0, stride, sources);
+  if ((kind & L.WORKED) !== 0) uTerms(views, span, u0, vx0, vy0, stride, step);
   for (let k = 0; k < count; k++) {
     const bx = plain ? f32[span + L.SPAN_BVX]! : f32[c + count + k]!;
     const by = plain ? f32[span + L.SPAN_BVY]! : f32[c + 2 * count + k]!;
@@ -100,10 +104,10 @@ function passSpan(views: Views, span: number, u0: number, vx0: number, vy0: numb
     f32[vx + k] = f(f(ax * f32[vx + k]!) - f(bx * f(f32[u + k]! - f32[u + k - stride]!)));
     f32[vy + k] = f(f(ay * f32[vy + k]!) + f(by * f(f32[u + k]! - f32[u + k - 1]!)));
   }
-  if ((kind & L.WORKED) !== 0) vTerms(views, span, u0, vx0, vy0, stride, sources);
+  if ((kind & L.WORKED) !== 0) vTerms(views, span, u0, vx0, vy0, stride, step);
 }
 
-function uTerms(views: Views, span: number, u0: number, vx0: number, vy0: number, stride: number, sources: number): void {
+function uTerms(views: Views, span: number, u0: number, vx0: number, vy0: number, stride: number, step: number): void {
   const { i32, f32 } = views;
   const first = i32[span + L.SPAN_COLUMN]!;
   const count = i32[span + L.SPAN_COUNT]!;
@@ -130,10 +134,10 @@ function uTerms(views: Views, span: number, u0: number, vx0: number, vy0: number
       f32[u + k] = f(f32[u + k]! - f(f32[bu + k]! * next));
     }
   }
-  points(views, i32[span + L.SPAN_POINTS]! >> 2, i32[span + L.SPAN_U_POINTS]!, u0, vx0, vy0, sources);
+  points(views, i32[span + L.SPAN_POINTS]! >> 2, i32[span + L.SPAN_U_POINTS]!, u0, vx0, vy0, step);
 }
 
-function vTerms(views: Views, span: number, u0: number, vx0: number, vy0: number, stride: number, sources: number): void {
+function vTerms(views: Views, span: number, u0: number, vx0: number, vy0: number, stride: number, step: number): void {
   const { i32, f32 } = views;
   const first = i32[span + L.SPAN_COLUMN]!;
   const count = i32[span + L.SPAN_COUNT]!;
@@ -164,52 +168,48 @@ function vTerms(views: Views, span: number, u0: number, vx0: number, vy0: number
   }
   const uPoints = i32[span + L.SPAN_U_POINTS]!;
   const at = (i32[span + L.SPAN_POINTS]! >> 2) + uPoints * L.POINT_WORDS;
-  points(views, at, i32[span + L.SPAN_V_POINTS]!, u0, vx0, vy0, sources);
+  points(views, at, i32[span + L.SPAN_V_POINTS]!, u0, vx0, vy0, step);
 }
 
-function points(views: Views, at: number, count: number, u: number, vx: number, vy: number, sources: number): void {
+function points(views: Views, at: number, count: number, u: number, vx: number, vy: number, step: number): void {
   const { i32, f32, f64 } = views;
   const weight = new Float64Array(1);
   const words = new Int32Array(weight.buffer);
   for (let k = 0; k < count; k++, at += L.POINT_WORDS) {
     const field = i32[at + L.POINT_FIELD]!;
     const target = (field === 0 ? u : field === 1 ? vx : vy) + i32[at + L.POINT_COLUMN]!;
-    const from = i32[at + L.POINT_SOURCE]!;
-    const value = i32[at + L.POINT_FROM_TABLE] === 1 ? f64[sources + from]! : f64[from >> 3]!;
+    // Steps are blocks of one here, so an incident line is always at its level 0.
+    const ahead = i32[at + L.POINT_FROM_TABLE] === 1 ? step : 0;
+    const value = f64[(i32[at + L.POINT_SOURCE]! + i32[at + L.POINT_STEP]! * ahead) >> 3]!;
     words[0] = i32[at + L.POINT_WEIGHT]!;
     words[1] = i32[at + L.POINT_WEIGHT + 1]!;
     f32[target] = f(f32[target]! + f(weight[0]! * value));
   }
 }
 
-function lineU({ i32, f64 }: Views, line: number, step: number): void {
+function stepLine({ i32, f64 }: Views, line: number, step: number): void {
   const at = (word: number): number => i32[line + word]! >> 3;
   const length = i32[line + L.LINE_LENGTH]!;
   const mx = i32[line + L.LINE_MX]!;
   const my = i32[line + L.LINE_MY]!;
   const fed = i32[line + L.LINE_FED]!;
   const [u, vx, vy, a, b] = [at(L.LINE_U), at(L.LINE_VX), at(L.LINE_VY), at(L.LINE_A), at(L.LINE_B)];
+  const next = at(L.LINE_LEVEL);
+  const u1 = u + next;
   const feed = at(L.LINE_FEED) + step * fed;
-  const bu = f64[(line + L.LINE_BU) >> 1]!;
-  for (let r = 0; r < fed; r++) f64[u + r] = f64[feed + r]!;
+  const double = (word: number): number => f64[(line + word) >> 1]!;
+  const [bu, bvx, bvy] = [double(L.LINE_BU), double(L.LINE_BVX), double(L.LINE_BVY)];
+  for (let r = 0; r < fed; r++) f64[u1 + r] = f64[feed + r]!;
   for (let r = fed; r < length - fed; r++) {
     const curl = f64[vy + r + mx]! - f64[vy + r]! - (f64[vx + r + my]! - f64[vx + r]!);
-    f64[u + r] = f64[a + 2 * r]! * f64[u + r]! + f64[b + 2 * r]! * bu * curl;
+    f64[u1 + r] = f64[a + 2 * r]! * f64[u + r]! + f64[b + 2 * r]! * bu * curl;
   }
-}
-
-function lineV({ i32, f64 }: Views, line: number): void {
-  const at = (word: number): number => i32[line + word]! >> 3;
-  const length = i32[line + L.LINE_LENGTH]!;
-  const mx = i32[line + L.LINE_MX]!;
-  const my = i32[line + L.LINE_MY]!;
-  const [u, vx, vy, a, b] = [at(L.LINE_U), at(L.LINE_VX), at(L.LINE_VY), at(L.LINE_A), at(L.LINE_B)];
-  const bvx = f64[(line + L.LINE_BVX) >> 1]!;
-  const bvy = f64[(line + L.LINE_BVY) >> 1]!;
   for (let r = Math.max(0, my); r < length + Math.min(0, my); r++) {
-    f64[vx + r] = f64[a + 2 * r - my]! * f64[vx + r]! - f64[b + 2 * r - my]! * bvx * (f64[u + r]! - f64[u + r - my]!);
+    const h = 2 * r - my;
+    f64[vx + next + r] = f64[a + h]! * f64[vx + r]! - f64[b + h]! * bvx * (f64[u1 + r]! - f64[u1 + r - my]!);
   }
   for (let r = Math.max(0, mx); r < length + Math.min(0, mx); r++) {
-    f64[vy + r] = f64[a + 2 * r - mx]! * f64[vy + r]! + f64[b + 2 * r - mx]! * bvy * (f64[u + r]! - f64[u + r - mx]!);
+    const h = 2 * r - mx;
+    f64[vy + next + r] = f64[a + h]! * f64[vy + r]! + f64[b + h]! * bvy * (f64[u1 + r]! - f64[u1 + r - mx]!);
   }
 }
