@@ -20,7 +20,7 @@ export class Bench {
     this.page = page;
     this.sheet = page.getByRole('application', { name: 'Sheet' });
     this.runStrip = page.getByRole('region', { name: 'Run', exact: true });
-    this.brief = page.getByRole('region', { name: 'Brief' });
+    this.brief = page.getByRole('complementary', { name: 'Brief' });
     this.readings = page.getByRole('region', { name: 'Readings' });
     this.title = page.getByLabel('Title of the job');
     page.on('pageerror', (error) => this.complaints.push(String(error)));
@@ -68,6 +68,13 @@ export class Bench {
   async waitForEnd(): Promise<void> {
     await expect(this.runStrip.getByText(/ended/)).toBeVisible({ timeout: 45_000 });
     await expect(this.runStrip.getByText('the job has changed since')).toBeHidden();
+  }
+
+  /** The time step the run strip stands at. */
+  async step(): Promise<number> {
+    const words = await this.runStrip.locator('.run-strip-words').innerText();
+    const match = /step ([\d\u00a0]+)/.exec(words);
+    return match === null ? 0 : Number(match[1]?.replaceAll('\u00a0', ''));
   }
 
   /** Pixels of the page at a place of the sheet in millimetres, found by reading the coordinates under the pointer. */

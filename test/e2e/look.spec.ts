@@ -43,6 +43,20 @@ for (const theme of ['light', 'dark'] as const) {
   }
 }
 
+for (const theme of ['light', 'dark'] as const) {
+  test(`a picture of the wave on its way through the slot is kept: ${theme}`, async ({ bench, page }) => {
+    if (theme === 'dark') await page.getByRole('button', { name: 'Turn to dark' }).click();
+    await bench.waitForEnd();
+    await bench.runStrip.getByLabel('Pace').selectOption({ label: '600 steps a second' });
+    await bench.runStrip.getByRole('button', { name: 'Run', exact: true }).click();
+    await expect.poll(() => bench.step(), { intervals: [20] }).toBeGreaterThan(380);
+    await bench.runStrip.getByRole('button', { name: 'Hold' }).click();
+    await expect(bench.runStrip.getByRole('button', { name: 'Resume' })).toBeVisible();
+    const picture = await page.screenshot({ path: `artifacts/bench-${theme}-moving.png` });
+    expect(picture.byteLength).toBeGreaterThan(20_000);
+  });
+}
+
 test('the page does not scroll sideways at any of the sizes', async ({ bench, page }) => {
   await bench.waitForEnd();
   for (const { width, height } of SIZES) {

@@ -1,0 +1,62 @@
+// Owns the life of a run on the screen: hold, one step, back to the start, pace, the field shown.
+// Must not know how runs are carried out.
+import { expect, test } from './bench.ts';
+
+test('a held run stands still, takes single steps, and goes on to its end', async ({ bench, page }) => {
+  await bench.waitForEnd();
+  const strip = bench.runStrip;
+  await strip.getByLabel('Pace').selectOption({ label: '200 steps a second' });
+  await strip.getByRole('button', { name: 'Run', exact: true }).click();
+  await expect.poll(() => bench.step()).toBeGreaterThan(20);
+  await strip.getByRole('button', { name: 'Hold' }).click();
+  await expect(strip.getByRole('button', { name: 'Resume' })).toBeVisible();
+  const held = await bench.step();
+  await page.waitForTimeout(300);
+  expect(await bench.step()).toBe(held);
+  for (const more of [1, 2, 3]) {
+    await strip.getByRole('button', { name: 'one step' }).click();
+    await expect.poll(() => bench.step()).toBe(held + more);
+  }
+  await strip.getByLabel('Pace').selectOption({ label: 'full speed' });
+  await strip.getByRole('button', { name: 'Resume' }).click();
+  await bench.waitForEnd();
+});
+
+test('back to t = 0 clears the field, and one step from there is step 1', async ({ bench }) => {
+  await bench.waitForEnd();
+  await bench.runStrip.getByRole('button', { name: 'back to t = 0' }).click();
+  await expect.poll(() => bench.step()).toBe(0);
+  await bench.runStrip.getByRole('button', { name: 'one step' }).click();
+  await expect.poll(() => bench.step()).toBe(1);
+});
+
+test('the field components offered are those of the section, and each paints another picture', async ({ bench }) => {
+  await bench.waitForEnd();
+  const strip = bench.runStrip;
+  await strip.getByLabel('Pace').selectOption({ label: '600 steps a second' });
+  await strip.getByRole('button', { name: 'Run', exact: true }).click();
+  await expect.poll(() => bench.step()).toBeGreaterThan(250);
+  await strip.getByRole('button', { name: 'Hold' }).click();
+  await expect(strip.getByRole('button', { name: 'Resume' })).toBeVisible();
+  const pictures = new Set<string>();
+  for (const field of ['Hz', 'Ex', 'Ey', '|E| dB', '|H| dB']) {
+    const before = await bench.fieldPixels();
+    const choice = strip.getByRole('radio', { name: field, exact: true });
+    const chosenAlready = await choice.isChecked();
+    await strip.getByText(field, { exact: true }).click();
+    await expect(choice).toBeChecked();
+    if (!chosenAlready) await expect.poll(() => bench.fieldPixels()).not.toBe(before);
+    pictures.add(await bench.fieldPixels());
+  }
+  expect(pictures.size).toBe(5);
+  await strip.getByText('off', { exact: true }).click();
+  await expect.poll(async () => pictures.has(await bench.fieldPixels())).toBe(false);
+});
+
+test('turning E from across the slot to along it changes the question, the fields and the answer', async ({ bench }) => {
+  await bench.waitForEnd();
+  await bench.brief.getByRole('button', { name: 'along', exact: true }).click();
+  await expect(bench.brief).toContainText('below cutoff');
+  await expect(bench.runStrip.getByRole('radio', { name: 'Ez', exact: true })).toBeVisible();
+  await bench.run();
+});
