@@ -100,7 +100,7 @@ export function strongLevel(frame: FieldFrame): number {
 
 /** The scale that follows the field rises quickly and sinks slowly, so that colours do not flicker. */
 export function followLevel(previous: number, level: number): number {
-  return level >= previous ? previous + 0.5 * (level - previous) : Math.max(level, previous * 0.985);
+  return level >= previous ? previous + 0.5 * (level - previous) : Math.max(level, previous * 0.96);
 }
 
 function makeLog2Table(): Float32Array {

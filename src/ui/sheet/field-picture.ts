@@ -8,24 +8,30 @@ import type { Palette } from './palette.ts';
 export interface ScaleMemory {
   readonly view: FieldView;
   readonly step: number;
+  readonly atRest: boolean;
   readonly scale: number;
   /** Largest level since the run began. */
   readonly largest: number;
 }
 
-/** Below this share of the run's largest level the automatic scale stays: what is left is not blown up to full colour. */
-const LEAST_SHARE = 2e-3;
+/** Below this share of the run's largest level the automatic scale stays: rounding noise is not blown up to full colour. */
+const LEAST_SHARE = 1e-4;
 
-/** Automatic scale after one more frame; a new run or another component starts afresh. */
-export function rememberScale(memory: ScaleMemory | null, frame: FieldFrame): ScaleMemory {
-  if (memory !== null && memory.view === frame.view && memory.step === frame.step) return memory;
+/**
+ * Automatic scale after one more frame. While the run goes on it follows without flicker; at rest it fits the frame
+ * shown, so that a decayed field is still seen. A new run or another component starts afresh.
+ */
+export function rememberScale(memory: ScaleMemory | null, frame: FieldFrame, atRest: boolean): ScaleMemory {
+  const same = memory !== null && memory.view === frame.view && memory.step === frame.step && memory.atRest === atRest;
+  if (same) return memory;
   const level = strongLevel(frame);
+  const now = { view: frame.view, step: frame.step, atRest };
   if (memory === null || memory.view !== frame.view || frame.step < memory.step || memory.scale === 0) {
-    return { view: frame.view, step: frame.step, scale: level, largest: level };
+    return { ...now, scale: level, largest: level };
   }
   const largest = Math.max(memory.largest, level);
-  const scale = Math.max(followLevel(memory.scale, level), LEAST_SHARE * largest);
-  return { view: frame.view, step: frame.step, scale, largest };
+  const followed = atRest ? level : followLevel(memory.scale, level);
+  return { ...now, scale: Math.max(followed, LEAST_SHARE * largest), largest };
 }
 
 export interface FieldPainter {

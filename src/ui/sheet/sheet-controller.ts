@@ -1,19 +1,19 @@
 // Owns the live sheet outside React: viewport, tool in hand, what is painted when, and what the chrome over it shows.
 // Must not know React, DOM events, or workers.
-import { latestFrame, setFrameLimits, subscribeFrame } from '../../app/frame-channel.ts';
+import { setFrameLimits, subscribeFrame } from '../../app/frame-channel.ts';
 import { useJobStore } from '../../app/job-store.ts';
+import { useRunStore } from '../../app/run-store.ts';
 import { useViewStore, type Tool } from '../../app/view-store.ts';
 import type { AppError } from '../../base/result.ts';
 import type { ResolvedJob, XY } from '../../model/job.ts';
-import { rememberScale, type ScaleMemory } from './field-picture.ts';
 import { sheetBox } from './layers/edges-layer.ts';
-import type { FieldScale } from './layers/scale-layer.ts';
 import { placeDimensions, type PlacedDimension } from './layers/selection-layer.ts';
 import type { Palette } from './palette.ts';
 import { EMPTY_OVERLAY, makeOverlay, type SheetOverlay } from './sheet-overlay.ts';
 import type { Marks } from './sheet-painter.ts';
 import { makePicture } from './sheet-picture.ts';
-import { makeStage, type Canvases, type FieldShown, type Stage } from './stage.ts';
+import { ShownField } from './shown-field.ts';
+import { makeStage, type Canvases, type Stage } from './stage.ts';
 import { findPart, thingAt, thingIds } from './things.ts';
 import { makeRuler } from './ticks.ts';
 import { reduceTool, takeTool, type ToolState } from './tools/reduce-tool.ts';
@@ -34,6 +34,7 @@ type Layer = 'frame' | 'field' | 'drawing' | 'marks';
 
 export class SheetController {
   readonly #stage: Stage;
+  readonly #field = new ShownField();
   readonly #listeners = new Set<() => void>();
   readonly #endings: (() => void)[] = [];
   readonly #dirty = new Set<Layer>(['frame', 'field', 'drawing', 'marks']);
@@ -51,7 +52,6 @@ export class SheetController {
   #menuPoint: XY | null = null;
   #gesture = 0;
   #editing: number | null = null;
-  #scaleMemory: ScaleMemory | null = null;
   #overlay: SheetOverlay = EMPTY_OVERLAY;
   /** Ids before the last edit, to tell what it made. */
   #idsBefore: ReadonlySet<string> = new Set();
@@ -70,6 +70,9 @@ export class SheetController {
         if (state.job !== before.job || state.resolved !== before.resolved) this.#takeJob();
       }),
       useViewStore.subscribe((state, before) => this.#viewChanged(state, before)),
+      useRunStore.subscribe(({ progress }, before) => {
+        if (progress.state !== before.progress.state) this.#spoil('frame', 'field', 'marks');
+      }),
       subscribeFrame(() => this.#spoil('frame', 'field', 'marks')),
     );
   }
@@ -209,7 +212,7 @@ export class SheetController {
       size: this.#size,
       palette: this.#palette,
       marks,
-      shown: this.#shown(),
+      shown: this.#field.read(),
       fieldPlace: useViewStore.getState().fieldPlace,
       madeAt: new Date(),
     });
@@ -327,7 +330,7 @@ export class SheetController {
       palette: this.#palette,
     };
     if (view === null || resolved === null) return;
-    if (this.#dirty.has('frame')) stage.takeFrame(this.#shown(), palette);
+    if (this.#dirty.has('frame')) stage.takeFrame(this.#field.read(), palette);
     if (this.#dirty.has('field')) stage.paintField(view, palette, resolved);
     if (this.#dirty.has('drawing')) stage.paintDrawing(view, palette, resolved);
     if (this.#dirty.has('marks')) {
@@ -337,18 +340,6 @@ export class SheetController {
       this.#tellOverlay(view, resolved, dimensions);
     }
     this.#dirty.clear();
-  }
-
-  #shown(): FieldShown {
-    const { fieldPlace, fieldScale, decibelSpan } = useViewStore.getState();
-    const frame = fieldPlace === 'off' ? null : latestFrame();
-    if (frame !== null) this.#scaleMemory = rememberScale(this.#scaleMemory, frame);
-    return { frame, fullScale: fieldScale ?? this.#scaleMemory?.scale ?? 0, spanDb: decibelSpan };
-  }
-
-  #fieldScale(): FieldScale | null {
-    const { frame, fullScale, spanDb } = this.#shown();
-    return frame === null ? null : { view: frame.view, fullScale, spanDb };
   }
 
   /** Dimensions stand only while the part is at rest or resized: during a drawing they would be in the way. */
@@ -372,7 +363,7 @@ export class SheetController {
       preview: this.#step?.preview ?? null,
       snap: this.#step?.snap ?? null,
       cursor: this.#cursor,
-      field: this.#fieldScale(),
+      field: this.#field.readScale(),
       footFrom: READOUT_PIXELS,
     };
   }

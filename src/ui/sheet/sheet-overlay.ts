@@ -67,7 +67,8 @@ export interface OverlayInput {
 export function makeOverlay(input: OverlayInput): SheetOverlay {
   const { job, resolved, selection, view, size, typed, snap, refusal, broken } = input;
   const part = findPart(job, selection[0]);
-  const at = typed?.at ?? snap?.at ?? input.cursor;
+  // The bare pointer, as the rulers mark it; a thing that is met gives its own coordinates.
+  const at = (snap === null || snap.words === null ? input.cursor : snap.at) ?? typed?.at ?? null;
   const hint = hintOf(input.tool, snap);
   const trouble =
     refusal === null

@@ -28,6 +28,7 @@ export type LayerContext = Pick<
   | 'rotate'
   | 'drawImage'
   | 'createLinearGradient'
+  | 'createRadialGradient'
   | 'fillStyle'
   | 'strokeStyle'
   | 'lineWidth'

@@ -25,6 +25,33 @@ export function drawField(surface: Surface, sheet: ResolvedJob['sheet'], picture
     context.drawImage(picture.image, x, y, width, height);
   }
   for (const edge of EDGE_NAMES) if (sheet.edges[edge] === 'absorbing') fadeOut(surface, { x, y, width, height }, edge, picture);
+  fadeCorners(surface, sheet.edges, { x, y, width, height }, picture);
+}
+
+/** Where two absorbing edges meet, the corner of the field runs on and fades too. */
+function fadeCorners(surface: Surface, edges: ResolvedJob['sheet']['edges'], sheet: Rect, picture: FieldPicture | null): void {
+  const { context, palette } = surface;
+  for (const across of ['left', 'right'] as const) {
+    for (const up of ['top', 'bottom'] as const) {
+      if (edges[across] !== 'absorbing' || edges[up] !== 'absorbing') continue;
+      const cornerX = across === 'left' ? sheet.x : sheet.x + sheet.width;
+      const cornerY = up === 'top' ? sheet.y : sheet.y + sheet.height;
+      const x = across === 'left' ? cornerX - FADE_PIXELS : cornerX;
+      const y = up === 'top' ? cornerY - FADE_PIXELS : cornerY;
+      if (picture === null) {
+        context.fillStyle = palette.sheet;
+        context.fillRect(x, y, FADE_PIXELS, FADE_PIXELS);
+      } else {
+        const [fromX, fromY] = [across === 'left' ? 0 : picture.width - 1, up === 'top' ? 0 : picture.height - 1];
+        context.drawImage(picture.image, fromX, fromY, 1, 1, x, y, FADE_PIXELS, FADE_PIXELS);
+      }
+      const gradient = context.createRadialGradient(cornerX, cornerY, 0, cornerX, cornerY, FADE_PIXELS);
+      gradient.addColorStop(0, palette.paperClear);
+      gradient.addColorStop(1, palette.paper);
+      context.fillStyle = gradient;
+      context.fillRect(x, y, FADE_PIXELS, FADE_PIXELS);
+    }
+  }
 }
 
 type Rect = { readonly x: number; readonly y: number; readonly width: number; readonly height: number };
@@ -54,8 +81,7 @@ function fadeOut(surface: Surface, sheet: Rect, edge: EdgeName, picture: FieldPi
   gradient.addColorStop(0, palette.paperClear);
   gradient.addColorStop(1, palette.paper);
   context.fillStyle = gradient;
-  // One pixel further out than the picture, so that smoothing leaves no seam.
-  context.fillRect(strip.x - 1, strip.y - 1, strip.width + 2, strip.height + 2);
+  context.fillRect(strip.x, strip.y, strip.width, strip.height);
 }
 
 function fadeStrip({ x, y, width, height }: Rect, edge: EdgeName): Rect {

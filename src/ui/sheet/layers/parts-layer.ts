@@ -39,8 +39,8 @@ function clearUnder(surface: Surface, outline: Outline): void {
 }
 
 function fillMedium(surface: Surface, part: ResolvedPart): void {
-  const { context, palette, view } = surface;
-  const thin = part.smallestMetres * view.pixelsPerMetre < SOLID_BELOW_PIXELS;
+  const { context, palette } = surface;
+  const thin = isThin(surface, part);
   context.beginPath();
   traceOutline(surface, part.outline);
   if (!part.medium.metal) {
@@ -52,6 +52,10 @@ function fillMedium(surface: Surface, part: ResolvedPart): void {
   context.fillStyle = thin ? palette.metal : palette.paper;
   context.fill('evenodd');
   if (!thin) hatchClip(surface, part.outline);
+}
+
+function isThin({ view }: Surface, part: ResolvedPart): boolean {
+  return part.smallestMetres * view.pixelsPerMetre < SOLID_BELOW_PIXELS;
 }
 
 function isLossy(medium: Medium): boolean {
@@ -136,11 +140,11 @@ function screenBoxOf(view: Viewport, outline: Outline): ScreenBox {
   return { left, top, right, bottom };
 }
 
-/** Parts left out of the reference have a dashed outline; parts of air a fine dotted one. */
+/** Parts left out of the reference have a dashed outline, where there is room for dashes; parts of air a dotted one. */
 function strokePart(surface: Surface, part: ResolvedPart): void {
   const { context, palette } = surface;
   const air = !part.medium.metal && part.medium.epsilonRelative <= 1.0001 && !isLossy(part.medium);
-  context.setLineDash(part.leftOutOfReference ? [7, 3.5] : air ? [1.5, 3] : []);
+  context.setLineDash(part.leftOutOfReference && !isThin(surface, part) ? [7, 3.5] : air ? [1.5, 3] : []);
   context.strokeStyle = part.medium.metal ? palette.metal : air ? palette.soft : palette.dielectricLine;
   context.lineWidth = 1.2;
   context.lineJoin = 'miter';

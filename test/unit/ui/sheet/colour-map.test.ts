@@ -198,14 +198,20 @@ describe('automatic scale', () => {
   });
 
   test('a new run starts the scale afresh, the same frame leaves it', () => {
-    const first = rememberScale(null, frame([8, 8, 8], 3, { step: 900 }));
-    expect(rememberScale(first, frame([1, 1, 1], 3, { step: 900 }))).toBe(first);
-    expect(rememberScale(first, frame([1, 1, 1], 3, { step: 1 })).scale).toBe(1);
+    const first = rememberScale(null, frame([8, 8, 8], 3, { step: 900 }), false);
+    expect(rememberScale(first, frame([1, 1, 1], 3, { step: 900 }), false)).toBe(first);
+    expect(rememberScale(first, frame([1, 1, 1], 3, { step: 1 }), false).scale).toBe(1);
   });
 
-  test('what is left of a decayed field is not blown up to full colour', () => {
-    let memory = rememberScale(null, frame([1, 1, 1], 3, { step: 1 }));
-    for (let step = 2; step < 5000; step++) memory = rememberScale(memory, frame([1e-9, 1e-9, 1e-9], 3, { step }));
-    expect(memory.scale).toBeCloseTo(2e-3, 9);
+  test('at rest the scale fits the frame shown', () => {
+    const running = rememberScale(null, frame([8, 8, 8], 3, { step: 1 }), false);
+    const last = frame([0.02, 0.02, 0.02], 3, { step: 2 });
+    expect(rememberScale(running, last, false).scale).toBeGreaterThan(7);
+    expect(rememberScale(rememberScale(running, last, false), last, true).scale).toBeCloseTo(0.02, 9);
+  });
+
+  test('rounding noise is not blown up to full colour', () => {
+    const running = rememberScale(null, frame([1, 1, 1], 3, { step: 1 }), false);
+    expect(rememberScale(running, frame([1e-9, 1e-9, 1e-9], 3, { step: 2 }), true).scale).toBeCloseTo(1e-4, 12);
   });
 });

@@ -34,7 +34,7 @@ function recorder(): { context: LayerContext; calls: Call[] } {
         if (name === 'setLineDash') dash = args[0] as readonly number[];
         calls.push({ name, args, dash, fillStyle: state['fillStyle'], composite: state['globalCompositeOperation'] });
         if (name === 'measureText') return { width: 6 * String(args[0]).length };
-        if (name === 'createLinearGradient') return { addColorStop: () => undefined };
+        if (name.startsWith('create')) return { addColorStop: () => undefined };
         return undefined;
       };
     },
