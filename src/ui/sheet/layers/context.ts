@@ -53,7 +53,6 @@ export interface Surface {
 }
 
 export const SANS = '"Inter Variable", Inter, "Helvetica Neue", Arial, sans-serif';
-export const MONO = '"JetBrains Mono Variable", "JetBrains Mono", ui-monospace, monospace';
 
 /** Adds the rings of an outline to the path under way. */
 export function traceOutline({ context, view }: Surface, outline: Outline): void {
