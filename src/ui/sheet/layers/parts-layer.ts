@@ -10,6 +10,9 @@ const HATCH_SPACING = 5;
 /** Narrower than this on screen, hatch would be noise: the part is drawn solid. */
 const SOLID_BELOW_PIXELS = 3.5;
 
+/** Narrower than this, the dashes of two sides would run into each other. */
+const DASHED_FROM_PIXELS = 8;
+
 /** Opacity of a dielectric's tint: grows with the logarithm of its permittivity, 1 is invisible, 12 and more is densest. */
 export function tintOpacity(epsilonRelative: number): number {
   if (epsilonRelative <= 1) return 0;
@@ -40,7 +43,7 @@ function clearUnder(surface: Surface, outline: Outline): void {
 
 function fillMedium(surface: Surface, part: ResolvedPart): void {
   const { context, palette } = surface;
-  const thin = isThin(surface, part);
+  const thin = narrowerThan(SOLID_BELOW_PIXELS, surface, part);
   context.beginPath();
   traceOutline(surface, part.outline);
   if (!part.medium.metal) {
@@ -54,8 +57,8 @@ function fillMedium(surface: Surface, part: ResolvedPart): void {
   if (!thin) hatchClip(surface, part.outline);
 }
 
-function isThin({ view }: Surface, part: ResolvedPart): boolean {
-  return part.smallestMetres * view.pixelsPerMetre < SOLID_BELOW_PIXELS;
+function narrowerThan(pixels: number, { view }: Surface, part: ResolvedPart): boolean {
+  return part.smallestMetres * view.pixelsPerMetre < pixels;
 }
 
 function isLossy(medium: Medium): boolean {
@@ -144,7 +147,9 @@ function screenBoxOf(view: Viewport, outline: Outline): ScreenBox {
 function strokePart(surface: Surface, part: ResolvedPart): void {
   const { context, palette } = surface;
   const air = !part.medium.metal && part.medium.epsilonRelative <= 1.0001 && !isLossy(part.medium);
-  context.setLineDash(part.leftOutOfReference && !isThin(surface, part) ? [7, 3.5] : air ? [1.5, 3] : []);
+  context.setLineDash(
+    part.leftOutOfReference && !narrowerThan(DASHED_FROM_PIXELS, surface, part) ? [7, 3.5] : air ? [1.5, 3] : [],
+  );
   context.strokeStyle = part.medium.metal ? palette.metal : air ? palette.soft : palette.dielectricLine;
   context.lineWidth = 1.2;
   context.lineJoin = 'miter';

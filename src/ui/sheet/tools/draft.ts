@@ -185,9 +185,9 @@ export function strokeWidth(draft: Draft, context: ToolContext): string {
   return typed.kind === 'value' ? typed.text : tidyLength(stepAtLeast(12 / context.pixelsPerMetre));
 }
 
-/** A new wall is as thick as a thin line of the drawing: about five pixels, on a round step. */
+/** A new wall is as thick as a thin line of the drawing: six pixels or more, on a round step. */
 function wallThickness(context: ToolContext): string {
-  return tidyLength(stepAtLeast(4 / context.pixelsPerMetre));
+  return tidyLength(stepAtLeast(6 / context.pixelsPerMetre));
 }
 
 /** The part that these points make, or null while they make none. */
