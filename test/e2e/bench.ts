@@ -65,6 +65,17 @@ export class Bench {
     await this.waitForEnd();
   }
 
+  /** Runs from t = 0 at a pace an eye can follow, and holds soon after a step. */
+  async holdAfter(step: number, pace: string): Promise<void> {
+    await this.runStrip.getByRole('button', { name: 'back to t = 0' }).click();
+    await expect.poll(() => this.step()).toBe(0);
+    await this.runStrip.getByLabel('Pace').selectOption({ label: pace });
+    await this.runStrip.getByRole('button', { name: 'Run', exact: true }).click();
+    await expect.poll(() => this.step(), { intervals: [20] }).toBeGreaterThan(step);
+    await this.runStrip.getByRole('button', { name: 'Hold' }).click();
+    await expect(this.runStrip.getByRole('button', { name: 'Resume' })).toBeVisible();
+  }
+
   async waitForEnd(): Promise<void> {
     await expect(this.runStrip.getByText(/ended/)).toBeVisible({ timeout: 45_000 });
     await expect(this.runStrip.getByText('the job has changed since')).toBeHidden();
@@ -161,10 +172,10 @@ async function textOf(download: Download): Promise<string> {
 }
 
 export const test = base.extend<{ bench: Bench }>({
-  bench: async ({ page }, use) => {
+  bench: async ({ page }, provide) => {
     const bench = new Bench(page);
     await bench.open();
-    await use(bench);
+    await provide(bench);
     expect(bench.complaints, 'the page complained').toEqual([]);
   },
 });

@@ -1,14 +1,7 @@
 // Owns the checks of how the bench looks and reads: accessibility rules, and pictures kept for people to judge.
 // Must not know how it is styled.
-import { readFileSync } from 'node:fs';
-import { createRequire } from 'node:module';
+import axe from 'axe-core';
 import { expect, test } from './bench.ts';
-
-const AXE = readFileSync(createRequire(import.meta.url).resolve('axe-core/axe.min.js'), 'utf8');
-
-interface AxeWindow {
-  readonly axe: { run(options: object): Promise<{ violations: { id: string; help: string; nodes: { html: string }[] }[] }> };
-}
 
 const SIZES = [
   { name: 'desk', width: 1440, height: 900 },
@@ -22,9 +15,8 @@ for (const theme of ['light', 'dark'] as const) {
     await bench.waitForEnd();
     if (theme === 'dark') await page.getByRole('button', { name: 'Turn to dark' }).click();
     // Evaluated by the browser's own tools, which the page's policy on scripts does not bind.
-    await page.evaluate(AXE);
+    await page.evaluate(axe.source);
     const violations = await page.evaluate(async () => {
-      const { axe } = window as unknown as AxeWindow;
       const { violations: found } = await axe.run({ runOnly: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'] });
       return found.map(({ id, help, nodes }) => ({ id, help, nodes: nodes.map(({ html }) => html.slice(0, 200)) }));
     });
@@ -47,11 +39,7 @@ for (const theme of ['light', 'dark'] as const) {
   test(`a picture of the wave on its way through the slot is kept: ${theme}`, async ({ bench, page }) => {
     if (theme === 'dark') await page.getByRole('button', { name: 'Turn to dark' }).click();
     await bench.waitForEnd();
-    await bench.runStrip.getByLabel('Pace').selectOption({ label: '600 steps a second' });
-    await bench.runStrip.getByRole('button', { name: 'Run', exact: true }).click();
-    await expect.poll(() => bench.step(), { intervals: [20] }).toBeGreaterThan(380);
-    await bench.runStrip.getByRole('button', { name: 'Hold' }).click();
-    await expect(bench.runStrip.getByRole('button', { name: 'Resume' })).toBeVisible();
+    await bench.holdAfter(380, '600 steps a second');
     const picture = await page.screenshot({ path: `artifacts/bench-${theme}-moving.png` });
     expect(picture.byteLength).toBeGreaterThan(20_000);
   });

@@ -5,11 +5,7 @@ import { expect, test } from './bench.ts';
 test('a held run stands still, takes single steps, and goes on to its end', async ({ bench, page }) => {
   await bench.waitForEnd();
   const strip = bench.runStrip;
-  await strip.getByLabel('Pace').selectOption({ label: '200 steps a second' });
-  await strip.getByRole('button', { name: 'Run', exact: true }).click();
-  await expect.poll(() => bench.step()).toBeGreaterThan(20);
-  await strip.getByRole('button', { name: 'Hold' }).click();
-  await expect(strip.getByRole('button', { name: 'Resume' })).toBeVisible();
+  await bench.holdAfter(20, '200 steps a second');
   const held = await bench.step();
   await page.waitForTimeout(300);
   expect(await bench.step()).toBe(held);
@@ -33,11 +29,7 @@ test('back to t = 0 clears the field, and one step from there is step 1', async 
 test('the field components offered are those of the section, and each paints another picture', async ({ bench }) => {
   await bench.waitForEnd();
   const strip = bench.runStrip;
-  await strip.getByLabel('Pace').selectOption({ label: '600 steps a second' });
-  await strip.getByRole('button', { name: 'Run', exact: true }).click();
-  await expect.poll(() => bench.step()).toBeGreaterThan(250);
-  await strip.getByRole('button', { name: 'Hold' }).click();
-  await expect(strip.getByRole('button', { name: 'Resume' })).toBeVisible();
+  await bench.holdAfter(250, '600 steps a second');
   const pictures = new Set<string>();
   for (const field of ['Hz', 'Ex', 'Ey', '|E| dB', '|H| dB']) {
     const before = await bench.fieldPixels();
