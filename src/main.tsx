@@ -2,9 +2,10 @@
 // Must not know anything else.
 import { StrictMode } from 'react';
 import { createRoot } from 'react-dom/client';
+// First, so that the style sheets of the places come after it and may differ from it.
+import './ui/theme.css';
 import { startApp } from './app/start-app.ts';
 import { App } from './ui/App.tsx';
-import './ui/theme.css';
 
 void startApp();
 

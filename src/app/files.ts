@@ -4,6 +4,7 @@ import { fileOpen, fileSave } from 'browser-fs-access';
 import { version } from '../../package.json';
 import type { AppError, Result } from '../base/result.ts';
 import { makeTimeSeriesCsv } from '../model/exports/time-series-csv.ts';
+import { makeInsertion } from '../engine/insertion.ts';
 import { makeSpectrumCsv } from '../model/exports/spectrum-csv.ts';
 import type { Job } from '../model/job.ts';
 import { makeEmptyJob } from '../model/new-job.ts';
@@ -140,7 +141,8 @@ export function exportTimeSeries(): void {
 export function exportSpectrum(): void {
   const { main, reference, answeredJob } = useRunStore.getState();
   if (main === null || answeredJob === null) return tellTrouble('There is no spectrum to export.', NOTHING_YET);
-  const text = makeSpectrumCsv(answeredJob, { main, reference, insertion: null }, version);
+  const insertion = reference === null ? null : makeInsertion(main, reference);
+  const text = makeSpectrumCsv(answeredJob, { main, reference, insertion }, version);
   download(new Blob([text], { type: 'text/csv' }), makeFileName(answeredJob.title, '-spectrum.csv'));
 }
 

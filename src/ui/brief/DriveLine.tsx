@@ -33,7 +33,7 @@ export function DriveLine({ drive, index }: { readonly drive: Drive; readonly in
       ) : (
         <LineCurrentWords drive={drive} path={path} />
       )}
-      <WaveformWords waveform={drive.waveform} path={[...path, 'waveform']} name={name} />.
+      <WaveformWords waveform={drive.waveform} path={[...path, 'waveform']} name={name} />
       {drive.kind === 'plane wave' ? <LaunchWords /> : null}
     </ThingLine>
   );
@@ -91,6 +91,13 @@ function chooseKind(path: Path, kind: Waveform['kind']): void {
   else setValue(path, makeWaveform(kind, band));
 }
 
+const AFTER_WAVEFORM: Readonly<Record<Waveform['kind'], string>> = {
+  'band pulse': '.',
+  'continuous wave': '',
+  'damped step': '',
+  samples: ',',
+};
+
 function WaveformWords({ waveform, path, name }: { readonly waveform: Waveform; readonly path: Path; readonly name: string }) {
   return (
     <>
@@ -98,12 +105,13 @@ function WaveformWords({ waveform, path, name }: { readonly waveform: Waveform; 
         label={`Waveform of ${name}`}
         value={waveform.kind}
         options={WAVEFORM_WORDS}
+        after={AFTER_WAVEFORM[waveform.kind]}
         onChoose={(kind) => chooseKind(path, kind)}
       />
       {waveform.kind === 'continuous wave' ? (
         <>
           {' at '}
-          <QuantityValue path={[...path, 'frequency']} text={waveform.frequency} label="Frequency" dimension="frequency" />
+          <QuantityValue path={[...path, 'frequency']} text={waveform.frequency} label="Frequency" dimension="frequency" />.
         </>
       ) : null}
       {waveform.kind === 'damped step' ? (
@@ -111,14 +119,14 @@ function WaveformWords({ waveform, path, name }: { readonly waveform: Waveform; 
           {' that rises in '}
           <QuantityValue path={[...path, 'rise']} text={waveform.rise} label="Rise time" dimension="time" />
           {' and decays in '}
-          <QuantityValue path={[...path, 'decay']} text={waveform.decay} label="Decay time" dimension="time" />
+          <QuantityValue path={[...path, 'decay']} text={waveform.decay} label="Decay time" dimension="time" />.
         </>
       ) : null}
       {waveform.kind === 'samples' ? (
         <>
-          {', '}
+          {' '}
           <strong>{waveform.name}</strong>
-          {`, ${waveform.times.length} of them `}
+          {`, ${waveform.times.length} of them. `}
           <Action label={`Load other samples for ${name}`} words="load others" onAct={() => void loadSamples(path)} />
         </>
       ) : null}

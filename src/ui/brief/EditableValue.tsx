@@ -3,6 +3,7 @@
 import { useId, useRef, useState } from 'react';
 import type { KeyboardEvent } from 'react';
 import type { AppError } from '../../base/result.ts';
+import { keepUnits } from './estimate-words.ts';
 
 export interface ValueEditing {
   /** Null when the text was taken, else why not. `key` joins the edit with those of the same key. */
@@ -25,15 +26,12 @@ interface EditableValueProps extends ValueEditing {
   readonly placeholder?: string;
 }
 
-/** Keeps a comma or full stop on the line of the value before it. */
-export const WORD_JOINER = '\u2060';
-
 let sessions = 0;
 
 export function EditableValue(props: EditableValueProps) {
   const { text, shown, label, className = '', placeholder = '\u2026' } = props;
   const [open, setOpen] = useState(false);
-  const restRef = useRef<HTMLButtonElement>(null);
+  const restRef = useRef<HTMLSpanElement>(null);
   const close = (refocus: boolean): void => {
     setOpen(false);
     if (refocus) requestAnimationFrame(() => restRef.current?.focus());
@@ -41,23 +39,23 @@ export function EditableValue(props: EditableValueProps) {
   if (open) return <ValueField {...props} onClose={close} />;
   const word = shown ?? text;
   return (
-    <>
-      <button
-        ref={restRef}
-        type="button"
-        className={`value ${className}`}
-        aria-label={`${label}: ${text}`}
-        onClick={() => setOpen(true)}
-        onKeyDown={(event) => {
-          if (event.key !== 'F2') return;
-          event.preventDefault();
-          setOpen(true);
-        }}
-      >
-        {word === '' ? placeholder : word}
-      </button>
-      {WORD_JOINER}
-    </>
+    <span
+      ref={restRef}
+      // A real button is a box of its own in the line: the comma after it would fall to the next line.
+      // oxlint-disable-next-line jsx-a11y/prefer-tag-over-role
+      role="button"
+      tabIndex={0}
+      className={`value ${className}`}
+      aria-label={`${label}: ${text}`}
+      onClick={() => setOpen(true)}
+      onKeyDown={(event) => {
+        if (event.key !== 'F2' && event.key !== 'Enter' && event.key !== ' ') return;
+        event.preventDefault();
+        setOpen(true);
+      }}
+    >
+      {word === '' ? placeholder : keepUnits(word)}
+    </span>
   );
 }
 

@@ -9,14 +9,16 @@ import { MATERIAL_GROUPS, swatchOf } from './materials.ts';
 interface MaterialChoiceProps {
   readonly label: string;
   readonly value: string;
+  /** The comma or full stop that must stay on its line. */
+  readonly after?: string;
   onChoose(id: string): void;
 }
 
-export function MaterialChoice({ label, value, onChoose }: MaterialChoiceProps) {
+export function MaterialChoice({ label, value, after = '', onChoose }: MaterialChoiceProps) {
   const own = useJobStore((state) => state.job.materials);
   const source = useJobStore((state) => findMaterial(state.job, value)?.source);
   return (
-    <ChoiceShell label={label} value={value} title={source} onChoose={onChoose}>
+    <ChoiceShell label={label} value={value} title={source} after={after} onChoose={onChoose}>
       {own.length === 0 ? null : (
         <optgroup label="Own materials">
           {own.map(({ id, name }) => (

@@ -23,6 +23,18 @@ interface PartProps {
   readonly last: boolean;
 }
 
+/** The comma or full stop after a material is handed to its choice, which keeps it on its line. */
+export function tiePunctuation(phrases: readonly Phrase[]): readonly { readonly phrase: Phrase; readonly after: string }[] {
+  const isMaterial = (phrase: Phrase | undefined): boolean => phrase !== undefined && 'as' in phrase && phrase.as === 'material';
+  const leading = (phrase: Phrase | undefined): string =>
+    phrase !== undefined && 'text' in phrase ? (/^[,.;:]/.exec(phrase.text)?.[0] ?? '') : '';
+  return phrases.map((phrase, k) => {
+    if (isMaterial(phrase)) return { phrase, after: leading(phrases[k + 1]) };
+    const cut = isMaterial(phrases[k - 1]) ? leading(phrase).length : 0;
+    return { phrase: 'text' in phrase ? { text: phrase.text.slice(cut) } : phrase, after: '' };
+  });
+}
+
 function readAt(part: Part, path: Path): unknown {
   return path.reduce<unknown>(
     (value, step) => (typeof value === 'object' && value !== null ? Reflect.get(value, step) : undefined),
@@ -30,13 +42,22 @@ function readAt(part: Part, path: Path): unknown {
   );
 }
 
-function PhraseWords({ phrase, part, index }: { readonly phrase: Phrase; readonly part: Part; readonly index: number }) {
+interface PhraseProps {
+  readonly phrase: Phrase;
+  readonly part: Part;
+  readonly index: number;
+  /** What the sentence goes on with. */
+  readonly after: string;
+}
+
+function PhraseWords({ phrase, part, index, after }: PhraseProps) {
   if ('text' in phrase) return phrase.text;
   const path: Path = ['parts', index, ...phrase.path];
   const value = readAt(part, phrase.path);
   const label = `${part.name}, ${phrase.path.join(' ')}`;
   if (phrase.as === 'material') {
-    return <MaterialChoice label={`Material of ${part.name}`} value={part.material} onChoose={(id) => void setValue(path, id)} />;
+    const choose = (id: string): void => void setValue(path, id);
+    return <MaterialChoice label={`Material of ${part.name}`} value={part.material} after={after} onChoose={choose} />;
   }
   if (phrase.as === 'point') return <PointValue path={path} point={value as Point} label={label} />;
   return <QuantityValue path={path} text={String(value)} label={label} dimension={phrase.as} />;
@@ -87,15 +108,15 @@ function PartActions({ part, index, last }: PartProps) {
 }
 
 export const PartLine = memo(function PartLine({ part, index, last }: PartProps) {
-  const phrases = describePart(part);
+  const phrases = tiePunctuation(describePart(part));
   return (
     <ThingLine id={part.id} name={part.name} actions={<PartActions part={part} index={index} last={last} />}>
       <MaterialSwatch material={part.material} />
       <NameValue path={['parts', index, 'name']} text={part.name} label="Name of the part" />
-      {phrases.map((phrase, k) => (
+      {phrases.map(({ phrase, after }, k) => (
         // A phrase is its place in the sentence; words like "to" come twice.
         // oxlint-disable-next-line react/no-array-index-key
-        <PhraseWords key={k} phrase={phrase} part={part} index={index} />
+        <PhraseWords key={k} phrase={phrase} part={part} index={index} after={after} />
       ))}
       <Treatment part={part} /> <ReferenceSwitch part={part} index={index} />
       <PointList part={part} index={index} />

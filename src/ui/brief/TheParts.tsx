@@ -60,7 +60,7 @@ function AddParts() {
         <AddLink label="own material" onAdd={addOwnMaterial} />
       </AddLinks>
       <p className="soft hint">
-        New parts are of <MaterialChoice label="Material of new parts" value={paint} onChoose={setPaint} />.
+        New parts are of <MaterialChoice label="Material of new parts" value={paint} after="." onChoose={setPaint} />
       </p>
     </>
   );

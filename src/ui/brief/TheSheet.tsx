@@ -24,9 +24,10 @@ export function TheSheet() {
         <MaterialChoice
           label="What fills the sheet"
           value={sheet.background}
+          after="."
           onChoose={(id) => void setValue(['sheet', 'background'], id)}
-        />
-        . The origin stands at <PointValue path={['sheet', 'origin']} point={sheet.origin} label="Origin" /> from its lower left
+        />{' '}
+        The origin stands at <PointValue path={['sheet', 'origin']} point={sheet.origin} label="Origin" /> from its lower left
         corner.
       </p>
       <EdgeWords edges={sheet.edges} />
@@ -53,9 +54,10 @@ export function chooseEdge(edges: Job['sheet']['edges'], edge: EdgeName, kind: E
 }
 
 function EdgeWords({ edges }: { readonly edges: Job['sheet']['edges'] }) {
-  const edge = (name: EdgeName) => (
+  const edge = (name: EdgeName, after: string) => (
     <Choice
       label={`The ${name} edge`}
+      after={after}
       value={edges[name]}
       options={EDGE_WORDS}
       onChoose={(kind) => void setValue(['sheet', 'edges'], chooseEdge(edges, name, kind))}
@@ -63,7 +65,7 @@ function EdgeWords({ edges }: { readonly edges: Job['sheet']['edges'] }) {
   );
   return (
     <p>
-      The left edge {edge('left')}, the right {edge('right')}; the top {edge('top')}, the bottom {edge('bottom')}.
+      The left edge {edge('left', ',')} the right {edge('right', ';')} the top {edge('top', ',')} the bottom {edge('bottom', '.')}
     </p>
   );
 }

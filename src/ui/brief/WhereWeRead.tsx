@@ -44,9 +44,9 @@ export function WhereWeRead() {
           label="Reference run"
           value={reference}
           options={REFERENCE_WORDS}
+          after="."
           onChoose={(chosen) => void setValue(['reference'], chosen)}
-        />
-        .{' '}
+        />{' '}
         {reference === 'none' ? null : (
           <span className="soft">The insertion ratio is the field at a probe over the same in the reference run.</span>
         )}

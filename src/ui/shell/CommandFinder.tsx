@@ -8,6 +8,22 @@ import { listCommands } from './commands.ts';
 import type { BenchCommand } from './commands.ts';
 import { useDialogStore } from './dialog-store.ts';
 
+/** Every word typed must begin a word of the command, in our words (better) or in others. */
+export function rankCommand(label: string, search: string, also: readonly string[] = []): number {
+  const begins = (text: string, word: string): boolean =>
+    text
+      .toLowerCase()
+      .split(/[^\p{L}\p{N}|=]+/u)
+      .some((part) => part.startsWith(word));
+  const words = search
+    .toLowerCase()
+    .split(/\s+/)
+    .filter((word) => word !== '');
+  if (words.every((word) => begins(label, word))) return 1;
+  const everything = [label, ...also].join(' ');
+  return words.every((word) => begins(everything, word)) ? 0.5 : 0;
+}
+
 const GROUPS = ['Run', 'Draw', 'Look', 'Job', 'Help'] as const;
 
 export function CommandFinder({ examples }: { readonly examples: readonly Example[] }) {
@@ -33,7 +49,7 @@ function FinderList({ examples, onDone }: { readonly examples: readonly Example[
     command.run();
   };
   return (
-    <Command label="Find a command" loop>
+    <Command label="Find a command" loop filter={rankCommand}>
       <Command.Input placeholder="What shall be done?" />
       <Command.List>
         <Command.Empty>No command is called that. Try another word for it.</Command.Empty>
