@@ -115,7 +115,9 @@ function writeEdge(surface: Surface, { from, to, out }: EdgeLine, edge: EdgeName
   const middleX = (Math.max(from[0], 40) + Math.min(to[0], size.width)) / 2;
   const middleY = (Math.max(from[1], 24) + Math.min(to[1], size.height)) / 2;
   context.save();
-  context.translate(middleX + out[0] * 17, middleY + out[1] * 17);
+  // Beyond the fading field of an absorbing edge, beyond the hatch of a metal one.
+  const aside = kind === 'absorbing' ? FADE_PIXELS + 6 : 17;
+  context.translate(middleX + out[0] * aside, middleY + out[1] * aside);
   if (edge === 'left') context.rotate(-Math.PI / 2);
   if (edge === 'right') context.rotate(Math.PI / 2);
   context.font = `11px ${SANS}`;
