@@ -30,7 +30,7 @@ export function App() {
   return (
     <div className="bench" data-narrow={narrow}>
       <Header examples={examples} />
-      {narrow ? <NarrowPlaces /> : <WidePlaces />}
+      <main className="places">{narrow ? <NarrowPlaces /> : <WidePlaces />}</main>
       <CommandFinder examples={examples} />
       <Cautions />
       <Notices />
@@ -41,16 +41,16 @@ export function App() {
 
 function SheetPlace() {
   return (
-    <main className="sheet-place">
+    <section className="sheet-place" aria-label="Sheet and run">
       <Sheet />
       <RunStrip />
-    </main>
+    </section>
   );
 }
 
 function WidePlaces() {
   return (
-    <Group orientation="horizontal" className="places">
+    <Group orientation="horizontal">
       <Panel id="brief" defaultSize="344px" minSize="260px" maxSize="46%" groupResizeBehavior="preserve-pixel-size">
         <Brief />
       </Panel>

@@ -1,6 +1,7 @@
 // Owns the line at the top: whose bench, which job, whether it is saved, and the few things done to a whole job.
 // Must not know how files are read or written.
 import { DropdownMenu } from 'radix-ui';
+import { createContext, use, useState } from 'react';
 import type { ReactNode } from 'react';
 import type { Example } from '../../app/examples.ts';
 import {
@@ -18,36 +19,42 @@ import { useViewStore } from '../../app/view-store.ts';
 import { useDialogStore } from './dialog-store.ts';
 import { JobTitle } from './JobTitle.tsx';
 
+/** Menus open inside the header, so that they belong to its landmark. */
+const MenuPlace = createContext<HTMLElement | null>(null);
+
 export function Header({ examples }: { readonly examples: readonly Example[] }) {
   const show = useDialogStore((state) => state.show);
+  const [header, setHeader] = useState<HTMLElement | null>(null);
   return (
-    <header className="header">
-      <h1 className="wordmark">Guidewall</h1>
-      <JobTitle />
-      <SavedState />
-      <span className="header-gap" />
-      <UndoRedo />
-      <button type="button" className="header-item" onClick={() => show('commands')}>
-        <span className="header-long">find a command</span> <kbd>Ctrl K</kbd>
-      </button>
-      <button type="button" className="header-item" onClick={() => void openJobFile()}>
-        open
-      </button>
-      <Menu label="examples">
-        {examples.map((example) => (
-          <DropdownMenu.Item key={example.id} className="menu-item" onSelect={() => void openExample(example)}>
-            {example.title}
-            <span className="menu-note">{example.lookAt}</span>
-          </DropdownMenu.Item>
-        ))}
-        <DropdownMenu.Separator className="menu-line" />
-        <MenuItem label="An empty job" onSelect={startNewJob} />
-      </Menu>
-      <ExportMenu />
-      <ThemeSwitch />
-      <button type="button" className="header-item" onClick={() => show('cautions')}>
-        limits
-      </button>
+    <header className="header" ref={setHeader}>
+      <MenuPlace value={header}>
+        <h1 className="wordmark">Guidewall</h1>
+        <JobTitle />
+        <SavedState />
+        <span className="header-gap" />
+        <UndoRedo />
+        <button type="button" className="header-item" onClick={() => show('commands')}>
+          <span className="header-long">find a command</span> <kbd>Ctrl K</kbd>
+        </button>
+        <button type="button" className="header-item" onClick={() => void openJobFile()}>
+          open
+        </button>
+        <Menu label="examples">
+          {examples.map((example) => (
+            <DropdownMenu.Item key={example.id} className="menu-item" onSelect={() => void openExample(example)}>
+              {example.title}
+              <span className="menu-note">{example.lookAt}</span>
+            </DropdownMenu.Item>
+          ))}
+          <DropdownMenu.Separator className="menu-line" />
+          <MenuItem label="An empty job" onSelect={startNewJob} />
+        </Menu>
+        <ExportMenu />
+        <ThemeSwitch />
+        <button type="button" className="header-item" onClick={() => show('cautions')}>
+          limits
+        </button>
+      </MenuPlace>
     </header>
   );
 }
@@ -94,7 +101,7 @@ function Menu({ label, children }: { readonly label: string; readonly children: 
   return (
     <DropdownMenu.Root modal={false}>
       <DropdownMenu.Trigger className="header-item">{label}</DropdownMenu.Trigger>
-      <DropdownMenu.Portal>
+      <DropdownMenu.Portal container={use(MenuPlace)}>
         <DropdownMenu.Content className="menu" align="end" sideOffset={6} collisionPadding={8}>
           {children}
         </DropdownMenu.Content>
