@@ -1,5 +1,6 @@
 // Owns which files a run leaves and what goes into each.
 // Must not know where they are written.
+import { makeInsertion } from '../engine/insertion.ts';
 import { makeSpectrumCsv } from '../model/exports/spectrum-csv.ts';
 import { makeTimeSeriesCsv } from '../model/exports/time-series-csv.ts';
 import type { Job } from '../model/job.ts';
@@ -15,7 +16,7 @@ export interface ResultFile {
 
 export function makeResultFiles(job: Job, main: RunRecord, reference: RunRecord | null): ResultFile[] {
   const complete = [main, reference].every((run) => run?.stopReason !== 'stopped by the person');
-  const insertion = null;
+  const insertion = reference === null ? null : makeInsertion(main, reference);
   const resolved = resolveJob(job);
   const listedHertz = resolved.ok ? resolved.value.band.listedHertz : [];
   const summary = makeSummary({ job, version: VERSION, listedHertz, main, reference, insertion, complete });

@@ -1,0 +1,204 @@
+// Owns what is read from spectra: insertion ratio, level and spectrum at a probe, and the floor that hides them.
+// Must not know plots, files or workers: a run record fits the structural types here.
+
+interface ComplexArray {
+  readonly re: ArrayLike<number>;
+  readonly im: ArrayLike<number>;
+}
+
+/** A finished run as the readings see it. */
+export interface SpectrumRun {
+  readonly components: readonly string[];
+  readonly dtSeconds: number;
+  readonly frequenciesHertz: ArrayLike<number>;
+  readonly traces: readonly { readonly probeId: string; readonly samples: readonly ArrayLike<number>[] }[];
+  readonly spectra: readonly { readonly probeId: string; readonly components: readonly ComplexArray[] }[];
+  readonly driveSpectrum: ComplexArray;
+}
+
+/** Why a point is not known, in the order of the numbers in `Curve.cause`. */
+export const CAUSES = [
+  'known',
+  'hidden by the end of the record or by single precision',
+  'the reference field is hidden itself',
+  'the drive holds too little there',
+] as const;
+
+export interface Curve {
+  /** dB of the quantity, one per frequency of the run. */
+  readonly db: Float64Array;
+  /** dB below which nothing can be read. */
+  readonly floorDb: Float64Array;
+  /** Index into CAUSES, one per frequency. */
+  readonly cause: Uint8Array;
+}
+
+/** A drive this far below its strongest frequency in the band is too weak to divide by. */
+const WEAKEST_DRIVE = 0.01;
+const SINGLE_PRECISION = 2 ** -24;
+
+/** Magnitude of a component ('Ez') or vector ('|E|', '|H|') at a probe, and the noise it may hold, per frequency, in field / Hz. */
+export interface Amplitude {
+  readonly size: Float64Array;
+  readonly noise: Float64Array;
+}
+
+/** Components that make up a name: itself, or all of the vector. */
+function membersOf(run: SpectrumRun, name: string): number[] {
+  const letter = name.startsWith('|') ? name[1] : null;
+  return [...run.components.keys()].filter((k) =>
+    letter === null ? run.components[k] === name : run.components[k]!.startsWith(letter!),
+  );
+}
+
+/** Null when the run has no such probe or component. */
+export function amplitudeAt(run: SpectrumRun, probeId: string, name: string): Amplitude | null {
+  const spectrum = run.spectra.find((one) => one.probeId === probeId);
+  const trace = run.traces.find((one) => one.probeId === probeId);
+  const members = membersOf(run, name);
+  if (spectrum === undefined || trace === undefined || members.length === 0) return null;
+  const n = run.frequenciesHertz.length;
+  const size = new Float64Array(n);
+  const noise = new Float64Array(n);
+  for (const member of members) {
+    const { re, im } = spectrum.components[member]!;
+    const level = traceNoise(trace.samples[member]!, run);
+    for (let k = 0; k < n; k++) {
+      size[k]! += re[k]! ** 2 + im[k]! ** 2;
+      noise[k]! += level ** 2;
+    }
+  }
+  return { size: size.map(Math.sqrt), noise: noise.map(Math.sqrt) };
+}
+
+/**
+ * What a spectrum of this trace cannot show, field / Hz, as an upper estimate.
+ * Single precision: each step rounds the field by up to 2^-24 of its size; over the record these add like a random walk,
+ * 2^-24 dt sqrt(sum x^2). Truncation: what the record cuts off, largest sample of its last period of the lowest frequency
+ * times the time constant with which the last two such periods decay (the whole record when they do not).
+ */
+function traceNoise(samples: ArrayLike<number>, run: SpectrumRun): number {
+  const { dtSeconds } = run;
+  const count = samples.length;
+  let squares = 0;
+  for (let n = 0; n < count; n++) squares += samples[n]! ** 2;
+  const rounding = SINGLE_PRECISION * dtSeconds * Math.sqrt(squares);
+  const lowest = Math.max(run.frequenciesHertz[0]!, 1 / (dtSeconds * Math.max(count, 1)));
+  const period = Math.max(1, Math.min(Math.floor(count / 4), Math.ceil(1 / (lowest * dtSeconds))));
+  const last = largest(samples, count - period, count);
+  const before = largest(samples, count - 2 * period, count - period);
+  const record = count * dtSeconds;
+  const decays = before > last && last > 0;
+  const timeConstant = decays ? Math.min(record, (period * dtSeconds) / Math.log(before / last)) : record;
+  return Math.hypot(rounding, last === 0 ? 0 : last * timeConstant);
+}
+
+function largest(samples: ArrayLike<number>, from: number, to: number): number {
+  let most = 0;
+  for (let n = Math.max(0, from); n < to; n++) most = Math.max(most, Math.abs(samples[n]!));
+  return most;
+}
+
+export function decibels(ratio: number): number {
+  return 20 * Math.log10(ratio);
+}
+
+/** Frequencies where the drive holds enough to divide by. */
+function strongDrive(run: SpectrumRun): (k: number) => boolean {
+  const { re, im } = run.driveSpectrum;
+  let most = 0;
+  for (let k = 0; k < re.length; k++) most = Math.max(most, Math.hypot(re[k]!, im[k]!));
+  return (k) => Math.hypot(re[k]!, im[k]!) >= WEAKEST_DRIVE * most;
+}
+
+/**
+ * Insertion ratio |F| / |F reference| in dB at a probe: with the parts over without them. Both runs must have the same
+ * frequencies (they do when made from one job). Null when either lacks the probe or component.
+ */
+export function insertionCurve(main: SpectrumRun, reference: SpectrumRun, probeId: string, name: string): Curve | null {
+  const own = amplitudeAt(main, probeId, name);
+  const other = amplitudeAt(reference, probeId, name);
+  if (own === null || other === null || own.size.length !== other.size.length) return null;
+  const strong = strongDrive(main);
+  return makeCurve(
+    own,
+    (k) => other.size[k]!,
+    (k) => (strong(k) ? (other.size[k]! > other.noise[k]! ? 0 : 2) : 3),
+  );
+}
+
+/**
+ * Level in dB over a microvolt (E) or microampere (H) per metre: the steady field when the drive has, at that frequency
+ * alone, the amplitude given in the job: F(f) / D(f), D being the spectrum of the unit waveform. RMS is 3.01 dB less.
+ */
+export function levelCurve(run: SpectrumRun, probeId: string, name: string, rms: boolean): Curve | null {
+  const own = amplitudeAt(run, probeId, name);
+  if (own === null) return null;
+  const { re, im } = run.driveSpectrum;
+  const strong = strongDrive(run);
+  const unit = 1e-6 * (rms ? Math.SQRT2 : 1);
+  return makeCurve(
+    own,
+    (k) => Math.hypot(re[k]!, im[k]!) * unit,
+    (k) => (strong(k) ? 0 : 3),
+  );
+}
+
+/** Spectrum in dB over 1 V/m/Hz or 1 A/m/Hz, as recorded. */
+export function spectrumCurve(run: SpectrumRun, probeId: string, name: string): Curve | null {
+  const own = amplitudeAt(run, probeId, name);
+  return own === null
+    ? null
+    : makeCurve(
+        own,
+        () => 1,
+        () => 0,
+      );
+}
+
+function makeCurve({ size, noise }: Amplitude, unit: (k: number) => number, cause: (k: number) => number): Curve {
+  const n = size.length;
+  const curve = { db: new Float64Array(n), floorDb: new Float64Array(n), cause: new Uint8Array(n) };
+  for (let k = 0; k < n; k++) {
+    curve.db[k] = decibels(size[k]! / unit(k));
+    curve.floorDb[k] = decibels(noise[k]! / unit(k));
+    curve.cause[k] = cause(k) || (size[k]! > noise[k]! ? 0 : 1);
+  }
+  return curve;
+}
+
+/** Insertion ratio of one probe as complex numbers, for files. */
+export interface ProbeInsertion {
+  readonly probeId: string;
+  readonly components: readonly {
+    readonly re: Float64Array;
+    readonly im: Float64Array;
+    /** 1 where the value is not known, for any cause. */
+    readonly belowFloor: Uint8Array;
+  }[];
+}
+
+/** H = F / F reference of every probe and component. */
+export function makeInsertion(main: SpectrumRun, reference: SpectrumRun): ProbeInsertion[] {
+  return main.spectra.flatMap(({ probeId, components }) => {
+    const others = reference.spectra.find((one) => one.probeId === probeId)?.components;
+    if (others === undefined) return [];
+    return [
+      {
+        probeId,
+        components: components.map((own, c) => {
+          const other = others[c]!;
+          const n = own.re.length;
+          const ratio = { re: new Float64Array(n), im: new Float64Array(n) };
+          for (let k = 0; k < n; k++) {
+            const power = other.re[k]! ** 2 + other.im[k]! ** 2;
+            ratio.re[k] = (own.re[k]! * other.re[k]! + own.im[k]! * other.im[k]!) / power;
+            ratio.im[k] = (own.im[k]! * other.re[k]! - own.re[k]! * other.im[k]!) / power;
+          }
+          const curve = insertionCurve(main, reference, probeId, main.components[c]!)!;
+          return { ...ratio, belowFloor: curve.cause.map((cause) => (cause === 0 ? 0 : 1)) };
+        }),
+      },
+    ];
+  });
+}
