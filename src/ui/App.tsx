@@ -1,15 +1,14 @@
 // Owns where the four places stand, and the shell around them.
 // Must not know what the places hold.
-import { useEffect } from 'react';
-import { Group, Panel, Separator } from 'react-resizable-panels';
+import { lazy, Suspense, useEffect } from 'react';
 import { useViewStore } from '../app/view-store.ts';
 import { Brief } from './brief/Brief.tsx';
 import { Readings } from './readings/Readings.tsx';
 import { RunBook } from './run-book/RunBook.tsx';
-import { Cautions } from './shell/Cautions.tsx';
-import { CommandFinder } from './shell/CommandFinder.tsx';
 import { Header } from './shell/Header.tsx';
 import { Notices } from './shell/Notices.tsx';
+import type { SplitterSpec } from './shell/Splitter.tsx';
+import { Splitter } from './shell/Splitter.tsx';
 import { useDrop } from './shell/use-drop.ts';
 import { useExamples } from './shell/use-examples.ts';
 import { useMedia } from './shell/use-media.ts';
@@ -17,6 +16,9 @@ import { useShortcuts } from './shell/use-shortcuts.ts';
 import { RunStrip } from './sheet/RunStrip.tsx';
 import { Sheet } from './sheet/Sheet.tsx';
 import './shell/shell.css';
+
+/** Fetched with the page, after its first paint: nothing is fetched later. */
+const Dialogs = lazy(async () => ({ default: (await import('./shell/Dialogs.tsx')).Dialogs }));
 
 export function App() {
   const theme = useViewStore((state) => state.theme);
@@ -31,8 +33,9 @@ export function App() {
     <div className="bench" data-narrow={narrow}>
       <Header examples={examples} />
       <main className="places">{narrow ? <NarrowPlaces /> : <WidePlaces />}</main>
-      <CommandFinder examples={examples} />
-      <Cautions />
+      <Suspense fallback={null}>
+        <Dialogs examples={examples} />
+      </Suspense>
       <Notices />
       {dropping ? <div className="drop-hint">Drop a job file to open it</div> : null}
     </div>
@@ -48,33 +51,49 @@ function SheetPlace() {
   );
 }
 
+const BRIEF_WIDTH: SplitterSpec = {
+  property: '--brief-width',
+  label: 'Width of the Brief',
+  direction: 'left and right',
+  grows: 'with',
+  initial: 344,
+  least: 240,
+  most: 640,
+};
+const READINGS_HEIGHT: SplitterSpec = {
+  property: '--readings-height',
+  label: 'Height of the readings',
+  direction: 'up and down',
+  grows: 'against',
+  initial: 304,
+  least: 110,
+  most: 720,
+};
+const RUN_BOOK_WIDTH: SplitterSpec = {
+  property: '--run-book-width',
+  label: 'Width of the run book',
+  direction: 'left and right',
+  grows: 'against',
+  initial: 232,
+  least: 150,
+  most: 480,
+};
+
 function WidePlaces() {
   return (
-    <Group orientation="horizontal">
-      <Panel id="brief" defaultSize="344px" minSize="260px" maxSize="46%" groupResizeBehavior="preserve-pixel-size">
-        <Brief />
-      </Panel>
-      <Separator className="splitter" aria-label="Width of the Brief" />
-      <Panel id="work" minSize="420px">
-        <Group orientation="vertical">
-          <Panel id="sheet" minSize="200px">
-            <SheetPlace />
-          </Panel>
-          <Separator className="splitter splitter-flat" aria-label="Height of the readings" />
-          <Panel id="readings" defaultSize="34%" minSize="120px">
-            <Group orientation="horizontal">
-              <Panel id="curves" minSize="300px">
-                <Readings />
-              </Panel>
-              <Separator className="splitter" aria-label="Width of the run book" />
-              <Panel id="run-book" defaultSize="232px" minSize="160px" groupResizeBehavior="preserve-pixel-size">
-                <RunBook />
-              </Panel>
-            </Group>
-          </Panel>
-        </Group>
-      </Panel>
-    </Group>
+    <div className="places-wide">
+      <Brief />
+      <Splitter spec={BRIEF_WIDTH} />
+      <div className="places-right">
+        <SheetPlace />
+        <Splitter spec={READINGS_HEIGHT} />
+        <div className="places-lower">
+          <Readings />
+          <Splitter spec={RUN_BOOK_WIDTH} />
+          <RunBook />
+        </div>
+      </div>
+    </div>
   );
 }
 

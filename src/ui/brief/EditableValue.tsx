@@ -85,7 +85,8 @@ function ValueField(props: EditableValueProps & { onClose(refocus: boolean): voi
     setError(commit(spun, joined));
   };
   const press = (event: KeyboardEvent): void => {
-    event.stopPropagation();
+    // Keys of the text are no keys of the sheet; those with Ctrl go on to the bench.
+    if (!event.ctrlKey && !event.metaKey) event.stopPropagation();
     if (event.key === 'Enter') finish(true);
     else if (event.key === 'Escape') {
       leaving.current = true;
