@@ -28,8 +28,9 @@ export interface SessionHost {
   now(): number;
 }
 
-/** Time between looks at the messages, and steps between looks at the energy. */
+/** Time between looks at the messages. */
 const SLICE_MILLISECONDS = 8;
+/** The energy is looked at when the step is a multiple of this, however the run was sliced: so a job always ends at the same step. */
 const ENERGY_EVERY = 256;
 /** Energy may not rise again after the drives have ended; this much above its lowest is no ripple. */
 const GROWTH_FACTOR = 4;
@@ -61,7 +62,6 @@ class Session implements SessionApi {
   private trouble: string | null = null;
   private energyPeak = 0;
   private energyDb = 0;
-  private energyStep = 0;
   /** Lowest energy since the drives ended. */
   private energyLowest = Infinity;
   private pace = Infinity;
@@ -105,7 +105,7 @@ class Session implements SessionApi {
     if (this.run === null || this.state === 'running' || this.state === 'done') return;
     this.run.advance(1);
     this.state = 'held';
-    this.judge(this.run, true);
+    this.judge(this.run);
   }
 
   async rewind(): Promise<void> {
@@ -170,7 +170,6 @@ class Session implements SessionApi {
     this.trouble = null;
     this.energyPeak = 0;
     this.energyDb = 0;
-    this.energyStep = 0;
     this.energyLowest = Infinity;
     this.busyMilliseconds = 0;
     this.speed = 0;
@@ -192,10 +191,16 @@ class Session implements SessionApi {
       const paced = Number.isFinite(this.pace);
       let elapsed = 0;
       while (this.state === 'running' && elapsed < SLICE_MILLISECONDS) {
-        const steps = Math.min(chunk, run.plan.stepLimit - run.step, paced ? allowed - (run.step - firstStep) : Infinity);
+        const untilLook = ENERGY_EVERY - (run.step % ENERGY_EVERY);
+        const steps = Math.min(
+          chunk,
+          untilLook,
+          run.plan.stepLimit - run.step,
+          paced ? allowed - (run.step - firstStep) : Infinity,
+        );
         if (steps <= 0) break;
         run.advance(steps);
-        this.judge(run, false);
+        this.judge(run);
         elapsed = this.host.now() - sliceStart;
       }
       const steps = run.step - firstStep;
@@ -210,11 +215,10 @@ class Session implements SessionApi {
   }
 
   /** Ends the run when it has decayed, reached its limit or broken. */
-  private judge(run: Run, force: boolean): void {
+  private judge(run: Run): void {
     const { plan } = run;
     const atLimit = run.step >= plan.stepLimit;
-    if (force || atLimit || run.step - this.energyStep >= ENERGY_EVERY) {
-      this.energyStep = run.step;
+    if (atLimit || run.step % ENERGY_EVERY === 0) {
       const energy = run.energy();
       if (!Number.isFinite(energy)) {
         this.trouble = describeTrouble(run);

@@ -100,8 +100,8 @@ export function makeCoefficients(
       }
     }
     let wrap: [number, number] | null = null;
-    for (let i = 0; i <= x.count && hasU; i++) {
-      if (x.linkOpen[i] !== 1 || metal?.yBlocked[row * (x.count + 1) + i] === 1) continue;
+    for (let i = 0; i <= x.count; i++) {
+      if (!hasU || x.linkOpen[i] !== 1 || metal?.yBlocked[row * (x.count + 1) + i] === 1) continue;
       const riseX = x.linkLength[i]! * absorbX.link.kappa[i]!;
       const loss = (vLoss * seen.yS[i]!) / seen.yM[i]!;
       const a = (1 - loss) / (1 + loss);

@@ -119,8 +119,8 @@ function metalEdges(job: ResolvedJob, axis: 'x' | 'y', origin: number): number[]
         const a = ring[k];
         const b = ring[(k + 1) % ring.length];
         if (a === undefined || b === undefined) continue;
-        const straight = Math.abs(a[along]! - b[along]!) < 1e-9 * length && Math.abs(a[across]! - b[across]!) > 1e-6 * length;
-        const at = a[along]! + origin;
+        const straight = Math.abs(a[along] - b[along]) < 1e-9 * length && Math.abs(a[across]! - b[across]!) > 1e-6 * length;
+        const at = a[along] + origin;
         if (straight && at > 0 && at < length) found.add(Math.round((at / length) * 1e9) / 1e9);
       }
     }

@@ -84,7 +84,7 @@ function makeScanner(edges: readonly Edge[], along: 0 | 1, tolerance: number, cl
     for (const { low, high, e } of active) {
       if (at < low || at >= high) continue;
       const part = (at - e[across]!) / (e[across + 2]! - e[across]!);
-      crossings.push([e[along]! + part * (e[along + 2]! - e[along]!), e[across + 2]! > e[across]! ? 1 : -1]);
+      crossings.push([e[along] + part * (e[along + 2]! - e[along]), e[across + 2]! > e[across]! ? 1 : -1]);
     }
     crossings.sort((a, b) => a[0] - b[0]);
     const intervals: Intervals = [];

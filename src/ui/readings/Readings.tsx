@@ -15,8 +15,9 @@ import './readings.css';
 
 const QUANTITIES: readonly Quantity[] = ['insertion ratio', 'level', 'spectrum'];
 
-/** The field that carries the wave best: Ez, or the transverse one of a wave along x. */
-function firstComponent(components: readonly string[]): string {
+/** The wanted one if the section has it; else the electric field that carries the wave. */
+function chooseComponent(wanted: string | null, components: readonly string[]): string {
+  if (wanted !== null && componentNames(components).includes(wanted)) return wanted;
   return components[0] === 'Ez' ? 'Ez' : '|E|';
 }
 
@@ -33,12 +34,10 @@ export function Readings() {
 
   const components = componentsOf((answeredJob ?? job).section);
   const names = componentNames(components);
-  const component = wantedComponent !== null && names.includes(wantedComponent) ? wantedComponent : firstComponent(components);
+  const component = chooseComponent(wantedComponent, components);
   const probe = job.probes.find(({ id }) => id === wantedProbe) ?? job.probes[0];
-  const choice: CurveChoice = useMemo(
-    () => ({ quantity, probeId: probe?.id ?? '', component, rms }),
-    [quantity, probe?.id, component, rms],
-  );
+  const probeId = probe?.id ?? '';
+  const choice: CurveChoice = { quantity, probeId, component, rms };
   const runs = useMemo((): DrawnRun[] => {
     const current: DrawnRun[] = main === null ? [] : [{ id: 'current', name: 'this run', main, reference, style: CURRENT_LINE }];
     const over = kept.filter((run) => run.overlaid && run.main !== main);
@@ -58,13 +57,13 @@ export function Readings() {
   return (
     <section className="readings" aria-label="Readings">
       <div className="readings-bar">
-        <span className="group" role="group" aria-label="Quantity">
+        <fieldset className="group" aria-label="Quantity">
           {QUANTITIES.map((one) => (
             <button key={one} className="plain-button" aria-pressed={one === quantity} onClick={() => setQuantity(one)}>
               {one}
             </button>
           ))}
-        </span>
+        </fieldset>
         <label>
           at{' '}
           <select className="quiet-select" value={probe.id} onChange={(event) => setProbe(event.target.value)}>
@@ -75,13 +74,13 @@ export function Readings() {
             ))}
           </select>
         </label>
-        <span className="group" role="group" aria-label="Component">
+        <fieldset className="group" aria-label="Component">
           {names.map((name) => (
             <button key={name} className="plain-button" aria-pressed={name === component} onClick={() => setComponent(name)}>
               {name}
             </button>
           ))}
-        </span>
+        </fieldset>
         <button className="plain-button" aria-pressed={logarithmic} onClick={() => setLogarithmic(!logarithmic)}>
           log f
         </button>
@@ -106,9 +105,5 @@ export function Readings() {
 /** Whether the curve can be trusted as it stands, in words next to it. */
 function ReadingState({ quantity }: { readonly quantity: Quantity }) {
   const words = useRunStore((state) => describeState(state, quantity));
-  return (
-    <span className="readings-state" role="status">
-      {words}
-    </span>
-  );
+  return <output className="readings-state">{words}</output>;
 }

@@ -15,7 +15,8 @@ import {
   type DrawnCurve,
   type DrawnRun,
 } from './curve-data.ts';
-import { Plot, type PlotLine } from './Plot.tsx';
+import type { PlotLine } from './plot-controller.ts';
+import { Plot } from './Plot.tsx';
 import { numberWords } from './scale-words.ts';
 
 interface Props {
@@ -60,6 +61,7 @@ export function SpectrumPlot({ runs, choice, probeName, logarithmic }: Props) {
       ) : (
         <Plot
           label={title}
+          wordsAt={(x) => cursorText(curves, x)}
           xUnit="Hz"
           yUnit={unitOf(choice)}
           yPrefixed={false}
@@ -118,7 +120,7 @@ function CursorWords({ curves, cursors, onClear }: { curves: readonly DrawnCurve
   const readings = cursors.map((cursor) => (cursor === null ? null : readAt(first, cursor)));
   const [a, b] = readings;
   return (
-    <span className="cursor-words num" role="status">
+    <output className="cursor-words num">
       {cursors.map((cursor, k) =>
         cursor === null ? null : (
           <span key={k}>
@@ -130,8 +132,12 @@ function CursorWords({ curves, cursors, onClear }: { curves: readonly DrawnCurve
       <button className="link-button" onClick={onClear}>
         clear
       </button>
-    </span>
+    </output>
   );
+}
+
+function cursorText(curves: readonly DrawnCurve[], cursor: number): string {
+  return `${formatQuantity(cursor, 'frequency', 5)}: ${curves.map((curve) => `${curve.name} ${wordsAt(curve, cursor)}`).join(', ')}`;
 }
 
 function wordsAt(curve: DrawnCurve, frequencyHertz: number): string {

@@ -7,7 +7,9 @@ import { useRunStore } from '../../app/run-store.ts';
 import { useViewStore } from '../../app/view-store.ts';
 import { formatQuantity } from '../../base/quantity.ts';
 import { makeTraceColumns, traceOf } from './curve-data.ts';
-import { nearestIndex, Plot } from './Plot.tsx';
+import { mergeColumns, type Merged } from './merge-columns.ts';
+import { nearestIndex } from './nearest-index.ts';
+import { Plot } from './Plot.tsx';
 import { axisUnit, numberWords } from './scale-words.ts';
 
 /** Points drawn at most: two for each pixel of a wide screen. */
@@ -34,7 +36,7 @@ export function TracePlot({ probeId, probeName, component }: Props) {
   );
   const [cursors, setCursors] = useState<readonly [number | null, number | null]>([null, null]);
   const live = main === null || progress === 'running' || progress === 'held';
-  const shown: readonly string[] = main?.components ?? components ?? [];
+  const shown: readonly string[] = main?.components ?? components ?? NO_COMPONENTS;
   const drawn = useMemo(
     () => shown.filter((name) => (component.startsWith('|') ? name.startsWith(component[1]!) : name === component)),
     [shown, component],
@@ -47,7 +49,6 @@ export function TracePlot({ probeId, probeName, component }: Props) {
       if (samples === null || dtSeconds === 0) return [];
       return [makeTraceColumns(samples, live ? Math.min(liveCount, samples.length) : samples.length, dtSeconds, MOST_POINTS)];
     });
-    // Two components share the times of the first only when neither is thinned; each keeps its own otherwise.
     return mergeColumns(made);
   }, [live, liveTraces, liveCount, main, drawn, shown, probeId, dtSeconds]);
   const lines = useMemo(
@@ -68,6 +69,7 @@ export function TracePlot({ probeId, probeName, component }: Props) {
       ) : (
         <Plot
           label={title}
+          wordsAt={(x) => traceWords(data, drawn, unit, x)}
           xUnit="s"
           yUnit={unit}
           yPrefixed
@@ -87,28 +89,7 @@ export function TracePlot({ probeId, probeName, component }: Props) {
 }
 
 const NO_MARKS: readonly number[] = [];
-
-interface Merged {
-  readonly x: number[];
-  readonly columns: (number | null)[][];
-}
-
-/** Columns over the union of their times; a line runs over the times it lacks. */
-export function mergeColumns(made: readonly { readonly x: number[]; readonly y: number[] }[]): Merged {
-  if (made.length === 1) return { x: made[0]!.x, columns: [made[0]!.y] };
-  const x = [...new Set(made.flatMap((column) => column.x))].sort((a, b) => a - b);
-  const columns = made.map((column) => {
-    let next = 0;
-    return x.map((t, k) => {
-      while (next < column.x.length - 1 && column.x[next]! < t) next++;
-      const t1 = column.x[next]!;
-      if (t1 === t || next === 0 || k === x.length - 1) return column.y[next]!;
-      const t0 = column.x[next - 1]!;
-      return column.y[next - 1]! + ((column.y[next]! - column.y[next - 1]!) * (t - t0)) / (t1 - t0);
-    });
-  });
-  return { x, columns };
-}
+const NO_COMPONENTS: readonly string[] = [];
 
 interface WordsProps extends Merged {
   readonly names: readonly string[];
@@ -120,20 +101,21 @@ function TraceCursorWords({ x, columns, names, unit, cursors }: WordsProps) {
   if (x.length === 0) return null;
   return (
     <span className="cursor-words num">
-      {cursors.map((cursor, k) => {
-        if (cursor === null) return null;
-        const at = nearestIndex(x, cursor);
-        const values = columns.map((column, n) => {
-          const value = column[at] ?? 0;
-          const scale = axisUnit(value, unit);
-          return `${names[n]} ${numberWords(value / scale.factor, 3)} ${scale.unit}`;
-        });
-        return (
-          <span key={k}>
-            {formatQuantity(x[at]!, 'time', 4)} · {values.join(', ')}
-          </span>
-        );
-      })}
+      {cursors.map((cursor, k) =>
+        cursor === null ? null : (
+          <span key={k === 0 ? 'first' : 'second'}>{traceWords({ x, columns }, names, unit, cursor)}</span>
+        ),
+      )}
     </span>
   );
+}
+
+function traceWords({ x, columns }: Merged, names: readonly string[], unit: string, cursor: number): string {
+  const at = nearestIndex(x, cursor);
+  const values = columns.map((column, n) => {
+    const value = column[at] ?? 0;
+    const scale = axisUnit(value, unit);
+    return `${names[n]} ${numberWords(value / scale.factor, 3)} ${scale.unit}`;
+  });
+  return `${formatQuantity(x[at] ?? 0, 'time', 4)} · ${values.join(', ')}`;
 }
