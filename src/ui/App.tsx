@@ -32,7 +32,7 @@ export function App() {
   return (
     <div className="bench" data-narrow={narrow}>
       <Header examples={examples} />
-      <main className="places">{narrow ? <NarrowPlaces /> : <WidePlaces />}</main>
+      <div className="places">{narrow ? <NarrowPlaces /> : <WidePlaces />}</div>
       <Suspense fallback={null}>
         <Dialogs examples={examples} />
       </Suspense>
@@ -83,16 +83,18 @@ function WidePlaces() {
   return (
     <div className="places-wide">
       <Brief />
-      <Splitter spec={BRIEF_WIDTH} />
-      <div className="places-right">
-        <SheetPlace />
-        <Splitter spec={READINGS_HEIGHT} />
-        <div className="places-lower">
-          <Readings />
-          <Splitter spec={RUN_BOOK_WIDTH} />
-          <RunBook />
+      <main className="places-main">
+        <Splitter spec={BRIEF_WIDTH} />
+        <div className="places-right">
+          <SheetPlace />
+          <Splitter spec={READINGS_HEIGHT} />
+          <div className="places-lower">
+            <Readings />
+            <Splitter spec={RUN_BOOK_WIDTH} />
+            <RunBook />
+          </div>
         </div>
-      </div>
+      </main>
     </div>
   );
 }
@@ -105,9 +107,11 @@ function NarrowPlaces() {
         <summary className="heading">Brief</summary>
         <Brief />
       </details>
-      <SheetPlace />
-      <Readings />
-      <RunBook />
+      <main>
+        <SheetPlace />
+        <Readings />
+        <RunBook />
+      </main>
     </div>
   );
 }

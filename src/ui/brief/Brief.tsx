@@ -21,7 +21,7 @@ export function Brief() {
   const said = useMemo(() => gatherSaid(job, remarks ?? [], errors), [job, remarks, errors]);
   return (
     <SaidContext value={said}>
-      <section className="brief" aria-label="Brief">
+      <aside className="brief" aria-label="Brief">
         <TheWave />
         <TheSheet />
         <TheParts />
@@ -29,7 +29,7 @@ export function Brief() {
         <NamedValues />
         <WhenItStops />
         <Notes />
-      </section>
+      </aside>
     </SaidContext>
   );
 }
