@@ -12,6 +12,7 @@ import { parseJob } from '../model/parse-job.ts';
 import { serialiseJob } from '../model/serialise-job.ts';
 import type { Example } from './examples.ts';
 import { exampleShelf } from './examples.ts';
+import { publishFrame } from './frame-channel.ts';
 import { useJobStore } from './job-store.ts';
 import { tell, tellTrouble } from './notice-store.ts';
 import type { Samples } from './read-samples.ts';
@@ -54,6 +55,8 @@ export function takeJob(read: Result<Job>, name: string): boolean {
     return false;
   }
   home = null;
+  // The field of another job says nothing of this one.
+  publishFrame(null);
   return true;
 }
 

@@ -5,7 +5,7 @@ import { fail, ok } from '../base/result.ts';
 import type { RunRecord, SessionApi } from '../../workers/protocol.ts';
 import type { Estimate } from '../engine/estimate.ts';
 import type { Job, ResolvedJob } from '../model/job.ts';
-import { wantsReference, writeReferenceKey } from './run-question.ts';
+import { wantsReference, makeReferenceKey } from './run-question.ts';
 import type { SolverSeat } from './solver-seat.ts';
 
 export type ReferenceState = 'none' | 'running' | 'done' | 'failed';
@@ -38,7 +38,7 @@ export class ReferenceRun {
     const turn = ++this.turn;
     void this.stop();
     if (!wantsReference(job)) return this.settle('none', null);
-    const key = writeReferenceKey(resolved, estimate);
+    const key = makeReferenceKey(resolved, estimate);
     const known = this.remembered.get(key);
     if (known !== undefined) return this.settle('done', known);
     this.settle('running', null);

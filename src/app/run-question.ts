@@ -1,6 +1,7 @@
 // Owns when two jobs ask the same question of the solver, and when a reference run is worth its time.
 // Must not know stores, workers, or how a run is made.
 import type { Estimate } from '../engine/estimate.ts';
+import { hashText } from '../engine/hash.ts';
 import type { Job, ResolvedJob } from '../model/job.ts';
 
 /** True when nothing but title and notes differs. Edits share what they leave alone, so identity mostly tells. */
@@ -30,13 +31,13 @@ export function wantsReference(job: Job): boolean {
 }
 
 /**
- * Everything the reference run's numbers hang on, as text. The parts left out act through the grid and the launch alone,
+ * Fingerprint of everything the reference run's numbers hang on. The parts left out act through the grid and the launch alone,
  * which the estimate states; so a wall can be moved without running the reference again.
  */
-export function writeReferenceKey(job: ResolvedJob, estimate: Estimate): string {
+export function makeReferenceKey(job: ResolvedJob, estimate: Estimate): string {
   const { cellsX, cellsY, dxMetres, dyMetres, dtSeconds, stepLimit, launch } = estimate;
   const parts = job.reference === 'empty sheet' ? [] : job.parts.filter((part) => !part.leftOutOfReference);
-  return JSON.stringify([
+  const everything = [
     { cellsX, cellsY, dxMetres, dyMetres, dtSeconds, stepLimit, launch },
     job.section,
     job.band,
@@ -46,5 +47,6 @@ export function writeReferenceKey(job: ResolvedJob, estimate: Estimate): string 
     job.probes.map(({ id, at }) => ({ id, at })),
     job.stop,
     parts.map(({ outline, medium }) => ({ outline, medium })),
-  ]);
+  ];
+  return hashText(JSON.stringify(everything));
 }

@@ -1,6 +1,6 @@
 // Owns where the four places stand, and the shell around them.
 // Must not know what the places hold.
-import { lazy, Suspense, useEffect } from 'react';
+import { lazy, Suspense, useLayoutEffect } from 'react';
 import { useViewStore } from '../app/view-store.ts';
 import { Brief } from './brief/Brief.tsx';
 import { Readings } from './readings/Readings.tsx';
@@ -26,7 +26,8 @@ export function App() {
   const examples = useExamples();
   const dropping = useDrop();
   useShortcuts();
-  useEffect(() => {
+  // Before the paint, so that a dark bench never flashes light.
+  useLayoutEffect(() => {
     document.documentElement.dataset['theme'] = theme;
   }, [theme]);
   return (

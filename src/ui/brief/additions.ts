@@ -1,11 +1,12 @@
 // Owns adding, doubling and removing things from the Brief and by command, where no pointer says the place.
 // Must not know how things are drawn on the sheet.
 import { formatQuantity } from '../../base/quantity.ts';
-import type { Drive, Part, PartKind, Point, Probe } from '../../model/job.ts';
+import type { Drive, Job, Part, PartKind, Point, Probe } from '../../model/job.ts';
+import type { Command } from '../../model/commands.ts';
 import { findAddedIds } from '../../model/commands.ts';
 import { makeLineCurrent, makePart, makePlaneWave, makeProbe } from '../../model/new-job.ts';
 import { useJobStore } from '../../app/job-store.ts';
-import { tell } from '../../app/notice-store.ts';
+import { tell, tellTrouble } from '../../app/notice-store.ts';
 import { useViewStore } from '../../app/view-store.ts';
 import { tryCommand } from './editing.ts';
 
@@ -93,8 +94,25 @@ export function duplicate(ids: readonly string[]): void {
 }
 
 export function remove(ids: readonly string[], name: string): void {
-  if (tryCommand({ do: 'remove', ids }) !== null) return;
-  tell(`${name} is removed.`, { label: 'Undo', run: () => useJobStore.getState().undo() });
+  const before = useJobStore.getState().job;
+  const refused = tryCommand({ do: 'remove', ids });
+  if (refused !== null) return tellTrouble(`${name} cannot be removed.`, [refused]);
+  const after = useJobStore.getState().job;
+  tell(`${name} is removed.`, { label: 'Put it back', run: () => putBack(ids, before, after) });
+}
+
+let putBacks = 0;
+
+/** Undoes the removal, or adds the things again when more has been done since. */
+function putBack(ids: readonly string[], before: Job, after: Job): void {
+  if (useJobStore.getState().job === after) return useJobStore.getState().undo();
+  const key = `put back ${(putBacks += 1)}`;
+  const wanted = new Set(ids);
+  for (const list of ['materials', 'parts', 'drives', 'probes'] as const) {
+    for (const [at, item] of before[list].entries()) {
+      if (wanted.has(item.id)) tryCommand({ do: 'add', list, item, at } as Command, key);
+    }
+  }
 }
 
 export function duplicateSelected(): void {
