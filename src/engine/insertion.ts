@@ -62,35 +62,61 @@ export function amplitudeAt(run: SpectrumRun, probeId: string, name: string): Am
   const noise = new Float64Array(n);
   for (const member of members) {
     const { re, im } = spectrum.components[member]!;
-    const level = traceNoise(trace.samples[member]!, run);
-    for (let k = 0; k < n; k++) {
-      size[k]! += re[k]! ** 2 + im[k]! ** 2;
-      noise[k]! += level ** 2;
-    }
+    for (let k = 0; k < n; k++) size[k]! += re[k]! ** 2 + im[k]! ** 2;
+    addTraceNoise(noise, trace.samples[member]!, run);
   }
   return { size: size.map(Math.sqrt), noise: noise.map(Math.sqrt) };
 }
 
 /**
- * What a spectrum of this trace cannot show, field / Hz, as an upper estimate.
+ * Adds the square of what a spectrum of this trace cannot show, (field / Hz)^2, as an upper estimate.
  * Single precision: each step rounds the field by up to 2^-24 of its size; over the record these add like a random walk,
- * 2^-24 dt sqrt(sum x^2). Truncation: what the record cuts off, largest sample of its last period of the lowest frequency
- * times the time constant with which the last two such periods decay (the whole record when they do not).
+ * 2^-24 dt sqrt(sum x^2), at every frequency alike.
+ * Truncation: what the record cuts off goes on as its end does. The transform of the last stretches of the record (one to
+ * three periods of the lowest frequency but at most a quarter of it; the largest of several, for each alone may pass
+ * through zero) is what they added
+ * at f; if they decay by r from one to the next, what is still to come is r / (1 - r) of it, and no less than it where f is
+ * off the ringing. Without decay it may go on for another record.
  */
-function traceNoise(samples: ArrayLike<number>, run: SpectrumRun): number {
-  const { dtSeconds } = run;
+function addTraceNoise(power: Float64Array, samples: ArrayLike<number>, run: SpectrumRun): void {
+  const { dtSeconds, frequenciesHertz } = run;
   const count = samples.length;
   let squares = 0;
   for (let n = 0; n < count; n++) squares += samples[n]! ** 2;
   const rounding = SINGLE_PRECISION * dtSeconds * Math.sqrt(squares);
-  const lowest = Math.max(run.frequenciesHertz[0]!, 1 / (dtSeconds * Math.max(count, 1)));
-  const period = Math.max(1, Math.min(Math.floor(count / 4), Math.ceil(1 / (lowest * dtSeconds))));
+  const lowest = Math.max(frequenciesHertz[0]!, 1 / (dtSeconds * Math.max(count, 1)));
+  const period = Math.max(1, Math.min(Math.floor(count / 12), Math.ceil(1 / (lowest * dtSeconds))));
   const last = largest(samples, count - period, count);
   const before = largest(samples, count - 2 * period, count - period);
-  const record = count * dtSeconds;
-  const decays = before > last && last > 0;
-  const timeConstant = decays ? Math.min(record, (period * dtSeconds) / Math.log(before / last)) : record;
-  return Math.hypot(rounding, last === 0 ? 0 : last * timeConstant);
+  const decay = before > last ? last / before : 1;
+  const toCome = decay < 1 ? Math.min(count / period, Math.max(1, decay / (1 - decay))) : count / period;
+  const looks = END_STRETCHES.map((stretch) => Math.min(count, Math.round(stretch * period)));
+  for (let k = 0; k < power.length; k++) {
+    const tail = last === 0 ? 0 : toCome * largestEnd(samples, looks, frequenciesHertz[k]! * dtSeconds) * dtSeconds;
+    power[k]! += rounding ** 2 + tail ** 2;
+  }
+}
+
+/** Stretches looked at, in periods of the lowest frequency. */
+const END_STRETCHES = [1, 1.3, 1.7, 2.2, 3];
+
+/** Largest |sum x[n] exp(-j 2 pi cycles n)| over the last `looks` samples (rising counts). */
+function largestEnd(samples: ArrayLike<number>, looks: readonly number[], cycles: number): number {
+  const cos = Math.cos(2 * Math.PI * cycles);
+  const sin = Math.sin(2 * Math.PI * cycles);
+  let [wr, wi, re, im, most, look] = [1, 0, 0, 0, 0, 0];
+  const deepest = looks[looks.length - 1]!;
+  for (let back = 1; back <= deepest; back++) {
+    const x = samples[samples.length - back]!;
+    re += x * wr;
+    im += x * wi;
+    [wr, wi] = [wr * cos - wi * sin, wr * sin + wi * cos];
+    while (looks[look] === back) {
+      most = Math.max(most, Math.hypot(re, im));
+      look++;
+    }
+  }
+  return most;
 }
 
 function largest(samples: ArrayLike<number>, from: number, to: number): number {

@@ -120,7 +120,7 @@ function makePlot(element: HTMLElement, read: Read): uPlot {
     width: Math.max(1, element.clientWidth),
     height: Math.max(1, element.clientHeight),
     legend: { show: false },
-    padding: [10, 26, 0, 4],
+    padding: [15, 26, 0, 4],
     cursor: { drag: { x: true, y: false, dist: 6 }, points: { show: false }, y: false },
     scales: {
       x: { time: false, ...(logarithmic ? LOGARITHMIC : {}), range: (_, min, max) => [min, max] },

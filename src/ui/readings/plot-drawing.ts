@@ -53,7 +53,7 @@ export function drawUnit(plot: uPlot, { yUnit, yPrefixed }: PlotContent, colour:
   ctx.font = font.replace('11px', `${11 * devicePixelRatio}px`);
   ctx.textBaseline = 'top';
   ctx.textAlign = 'left';
-  ctx.fillText(unit, bbox.left + 5 * devicePixelRatio, bbox.top + 2 * devicePixelRatio);
+  ctx.fillText(unit, bbox.left, bbox.top - 13 * devicePixelRatio);
   ctx.restore();
 }
 
