@@ -8,7 +8,7 @@ import { useJobStore } from './job-store.ts';
 import { tellTrouble } from './notice-store.ts';
 import type { KeptRun } from './run-store.ts';
 import { useRunStore } from './run-store.ts';
-import type { Shelf } from './shelf.ts';
+import type { LastWords, Shelf } from './shelf.ts';
 import { readStoredRun } from './stored-run.ts';
 
 /** Longest time between an edit and its being on the shelf, while the page lives. */
@@ -31,13 +31,15 @@ async function putAside(shelf: Shelf, key: string, value: unknown): Promise<void
 }
 
 /** Reads what was saved. Never fails: what cannot be read is put aside and told. */
-export async function restore(shelf: Shelf): Promise<Restored> {
+export async function restore(shelf: Shelf, lastWords: LastWords): Promise<Restored> {
   const troubles: AppError[] = [];
-  let job: Job | null = null;
   const kept: KeptRun[] = [];
+  // A note that is there is newer than the shelf: a finished write takes it away.
+  const note = parseJob(lastWords.read() ?? '');
+  let job: Job | null = note.ok ? note.value : null;
   try {
     const stored = await shelf.get(JOB_KEY);
-    if (stored !== undefined) {
+    if (stored !== undefined && job === null) {
       const parsed = parseJob(stored);
       if (parsed.ok) job = parsed.value;
       else {
@@ -73,19 +75,23 @@ function describeShelf(error: unknown): AppError {
 /** Writes what changed, at most once in `SAVE_MILLISECONDS`; `flush` writes at once. */
 export class Saver {
   private readonly shelf: Shelf;
+  private readonly lastWords: LastWords;
   private savedJob: Job | null = null;
   private savedRuns: ReadonlyMap<string, KeptRun> = new Map();
   private timer: ReturnType<typeof setTimeout> | null = null;
   private writing: Promise<void> = Promise.resolve();
   private told = false;
 
-  constructor(shelf: Shelf) {
+  constructor(shelf: Shelf, lastWords: LastWords) {
     this.shelf = shelf;
+    this.lastWords = lastWords;
   }
 
   /** Saves from now on; what is in the stores now counts as saved when `saved` says so. */
   attach(saved: Restored): () => void {
-    this.savedJob = saved.job === null ? null : useJobStore.getState().job;
+    // A note becomes a saved job by being written once more.
+    const onShelf = saved.job !== null && this.lastWords.read() === null;
+    this.savedJob = onShelf ? useJobStore.getState().job : null;
     this.savedRuns = new Map(saved.kept.map((run) => [run.id, run]));
     const endJob = useJobStore.subscribe((state, before) => {
       if (state.job !== before.job) this.saveSoon();
@@ -110,6 +116,13 @@ export class Saver {
     return this.writing;
   }
 
+  /** The page may be gone before a write is done: the job is left as a note, and written as well. */
+  leave(): void {
+    const { job } = useJobStore.getState();
+    if (job !== this.savedJob) this.lastWords.write(serialiseJob(job));
+    void this.flush();
+  }
+
   private saveSoon(): void {
     if (useJobStore.getState().saved !== 'saving') useJobStore.setState({ saved: 'saving' });
     this.timer ??= setTimeout(() => void this.flush(), SAVE_MILLISECONDS);
@@ -124,6 +137,7 @@ export class Saver {
       for (const [id, run] of runs) if (this.savedRuns.get(id) !== run) await this.shelf.set(RUN_KEY + id, run);
       for (const id of this.savedRuns.keys()) if (!runs.has(id)) await this.shelf.del(RUN_KEY + id);
       this.savedRuns = runs;
+      if (useJobStore.getState().job === job) this.lastWords.write(null);
       if (this.timer === null) useJobStore.setState({ saved: 'saved' });
     } catch (error) {
       useJobStore.setState({ saved: 'not saved' });

@@ -8,24 +8,25 @@ import { tellTrouble } from './notice-store.ts';
 import { restore, Saver } from './persistence.ts';
 import { runActions, runController } from './run-controller.ts';
 import { useRunStore } from './run-store.ts';
-import { openShelf } from './shelf.ts';
+import { openLastWords, openShelf } from './shelf.ts';
 import { useViewStore } from './view-store.ts';
 
 /** Called once, before the first paint; never waits for the person. */
 export async function startApp(): Promise<void> {
   followSelection();
   const shelf = openShelf();
-  const restored = await restore(shelf);
+  const lastWords = openLastWords();
+  const restored = await restore(shelf, lastWords);
   useRunStore.setState({ kept: restored.kept });
   const job = restored.job ?? (await firstExample());
   if (job !== null) useJobStore.getState().dispatch({ do: 'replace', job }, { kind: 'skip' });
   if (restored.troubles.length > 0) {
     tellTrouble('Some of what was saved could not be read. It is kept aside in the browser.', restored.troubles);
   }
-  const saver = new Saver(shelf);
+  const saver = new Saver(shelf, lastWords);
   saver.attach(restored);
-  addEventListener('pagehide', () => void saver.flush());
-  document.addEventListener('visibilitychange', () => void saver.flush());
+  addEventListener('pagehide', () => saver.leave());
+  document.addEventListener('visibilitychange', () => saver.leave());
   runController.attach();
   void runActions.run();
   void exampleShelf.preload();

@@ -4,7 +4,7 @@ import { useNoticeStore } from '../../../src/app/notice-store.ts';
 import { restore, Saver } from '../../../src/app/persistence.ts';
 import type { KeptRun } from '../../../src/app/run-store.ts';
 import { useRunStore } from '../../../src/app/run-store.ts';
-import type { Shelf } from '../../../src/app/shelf.ts';
+import type { LastWords, Shelf } from '../../../src/app/shelf.ts';
 import { serialiseJob } from '../../../src/model/serialise-job.ts';
 import { makeRecord } from './fake-solver.ts';
 import { makeSmallJob } from './small-job.ts';
@@ -28,6 +28,9 @@ function makeShelf(): Shelf & { readonly things: Map<string, unknown>; writes: n
   return shelf;
 }
 
+let noted: string | null = null;
+const note: LastWords = { read: () => noted, write: (text) => void (noted = text) };
+
 const NOTHING = { job: null, kept: [], troubles: [] };
 
 function makeKept(id: string, name = 'First'): KeptRun {
@@ -47,6 +50,7 @@ let detach = (): void => undefined;
 
 beforeEach(() => {
   vi.useFakeTimers();
+  noted = null;
   useJobStore.getState().dispatch({ do: 'replace', job: makeSmallJob() }, { kind: 'skip' });
   useRunStore.setState({ kept: [] });
   useNoticeStore.setState({ notices: [] });
@@ -59,7 +63,7 @@ afterEach(() => {
 
 test('an edit is on the shelf within 400 ms, also while edits keep coming', async () => {
   const shelf = makeShelf();
-  detach = new Saver(shelf).attach(NOTHING);
+  detach = new Saver(shelf, note).attach(NOTHING);
   for (let k = 0; k < 7; k += 1) {
     useJobStore.getState().dispatch({ do: 'set', path: ['title'], value: `Edit ${k}` });
     await vi.advanceTimersByTimeAsync(100);
@@ -67,34 +71,61 @@ test('an edit is on the shelf within 400 ms, also while edits keep coming', asyn
   expect(shelf.writes).toBeGreaterThanOrEqual(1);
   expect(useJobStore.getState().saved).toBe('saving');
   await vi.advanceTimersByTimeAsync(400);
-  expect((await restore(shelf)).job?.title).toBe('Edit 6');
+  expect((await restore(shelf, note)).job?.title).toBe('Edit 6');
   expect(useJobStore.getState().saved).toBe('saved');
 });
 
 test('leaving the page writes what was not written yet', async () => {
   const shelf = makeShelf();
-  const saver = new Saver(shelf);
+  const saver = new Saver(shelf, note);
   detach = saver.attach(NOTHING);
   useJobStore.getState().dispatch({ do: 'set', path: ['title'], value: 'Last words' });
   await saver.flush();
-  expect((await restore(shelf)).job?.title).toBe('Last words');
+  expect((await restore(shelf, note)).job?.title).toBe('Last words');
+});
+
+test('an edit made in the last moment comes back from the note, and the note goes once it is on the shelf', async () => {
+  const shelf = makeShelf();
+  const saver = new Saver(shelf, note);
+  detach = saver.attach(NOTHING);
+  await saver.flush();
+  useJobStore.getState().dispatch({ do: 'set', path: ['title'], value: 'Last moment' });
+  shelf.full = true;
+  saver.leave();
+  await vi.advanceTimersByTimeAsync(10);
+  shelf.full = false;
+  const back = await restore(shelf, note);
+  expect(back.job?.title).toBe('Last moment');
+  const next = new Saver(shelf, note);
+  const end = next.attach(back);
+  await next.flush();
+  end();
+  expect(noted).toBeNull();
+  expect((await restore(shelf, note)).job?.title).toBe('Last moment');
+});
+
+test('a note that cannot be read leaves the shelf to speak', async () => {
+  const shelf = makeShelf();
+  shelf.things.set('job', serialiseJob(makeSmallJob()));
+  noted = '{"guidewall": 1';
+  expect((await restore(shelf, note)).job?.title).toBe('Small');
 });
 
 test('a kept run comes back whole, records and all', async () => {
   const shelf = makeShelf();
-  const saver = new Saver(shelf);
+  const saver = new Saver(shelf, note);
   detach = saver.attach(NOTHING);
   const run = makeKept('run-1');
   useRunStore.setState({ kept: [run] });
   await saver.flush();
-  const back = await restore(shelf);
+  const back = await restore(shelf, note);
   expect(back.troubles).toEqual([]);
   expect(back.kept).toEqual([run]);
 });
 
 test('renaming one run writes that one alone, and removing it takes it off the shelf', async () => {
   const shelf = makeShelf();
-  const saver = new Saver(shelf);
+  const saver = new Saver(shelf, note);
   detach = saver.attach(NOTHING);
   const runs = [makeKept('run-1'), makeKept('run-2', 'Second')];
   useRunStore.setState({ kept: runs });
@@ -105,13 +136,13 @@ test('renaming one run writes that one alone, and removing it takes it off the s
   expect(shelf.writes).toBe(before + 1);
   useRunStore.setState({ kept: runs.slice(0, 1) });
   await saver.flush();
-  expect((await restore(shelf)).kept.map((run) => run.id)).toEqual(['run-1']);
+  expect((await restore(shelf, note)).kept.map((run) => run.id)).toEqual(['run-1']);
 });
 
 test('a job that cannot be read is put aside, told, and does not block the start', async () => {
   const shelf = makeShelf();
   shelf.things.set('job', serialiseJob(makeSmallJob()).slice(0, 200));
-  const back = await restore(shelf);
+  const back = await restore(shelf, note);
   expect(back.job).toBeNull();
   expect(back.troubles[0]?.message).toContain('JSON');
   const aside = [...shelf.things.keys()].filter((key) => key.startsWith('aside'));
@@ -131,7 +162,7 @@ test.each([
   const shelf = makeShelf();
   shelf.things.set('run run-1', broken);
   shelf.things.set('run run-2', makeKept('run-2', 'Good'));
-  const back = await restore(shelf);
+  const back = await restore(shelf, note);
   expect(back.kept.map((run) => run.name)).toEqual(['Good']);
   expect(back.troubles).toHaveLength(1);
   expect([...shelf.things.keys()].some((key) => key.startsWith('aside'))).toBe(true);
@@ -140,7 +171,7 @@ test.each([
 test('a browser that keeps nothing is told once, and work goes on', async () => {
   const shelf = makeShelf();
   shelf.full = true;
-  detach = new Saver(shelf).attach(NOTHING);
+  detach = new Saver(shelf, note).attach(NOTHING);
   for (const title of ['One', 'Two']) {
     useJobStore.getState().dispatch({ do: 'set', path: ['title'], value: title });
     await vi.advanceTimersByTimeAsync(500);
@@ -150,7 +181,7 @@ test('a browser that keeps nothing is told once, and work goes on', async () => 
   shelf.full = false;
   useJobStore.getState().dispatch({ do: 'set', path: ['title'], value: 'Three' });
   await vi.advanceTimersByTimeAsync(500);
-  expect((await restore(shelf)).job?.title).toBe('Three');
+  expect((await restore(shelf, note)).job?.title).toBe('Three');
   expect(useJobStore.getState().saved).toBe('saved');
 });
 
@@ -161,7 +192,7 @@ test('a shelf that cannot be read at all still lets the program start', async ()
     del: () => Promise.reject(new Error('no storage')),
     keys: () => Promise.reject(new Error('no storage')),
   };
-  const back = await restore(shelf);
+  const back = await restore(shelf, note);
   expect(back).toMatchObject({ job: null, kept: [] });
   expect(back.troubles[0]?.code).toBe('storage');
 });
