@@ -20,7 +20,7 @@ export class Bench {
     this.page = page;
     this.sheet = page.getByRole('application', { name: 'Sheet' });
     this.runStrip = page.getByRole('region', { name: 'Run', exact: true });
-    this.brief = page.getByRole('complementary', { name: 'Brief' });
+    this.brief = page.getByLabel('Brief', { exact: true });
     this.readings = page.getByRole('region', { name: 'Readings' });
     this.title = page.getByLabel('Title of the job');
     page.on('pageerror', (error) => this.complaints.push(String(error)));
