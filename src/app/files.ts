@@ -141,7 +141,21 @@ export function exportTimeSeries(): void {
   download(new Blob([text], { type: 'text/csv' }), makeFileName(answeredJob.title, '-time-series.csv'));
 }
 
-export function exportSpectrum(): void {
+/** A spectrum without its reference would lack H: the reference run under way is waited for. */
+function referenceSettled(): Promise<void> {
+  return new Promise((resolve) => {
+    const end = useRunStore.subscribe(look);
+    function look(): void {
+      if (useRunStore.getState().referenceState === 'running') return;
+      end();
+      resolve();
+    }
+    look();
+  });
+}
+
+export async function exportSpectrum(): Promise<void> {
+  await referenceSettled();
   const { main, reference, answeredJob } = useRunStore.getState();
   if (main === null || answeredJob === null) return tellTrouble('There is no spectrum to export.', NOTHING_YET);
   const insertion = reference === null ? null : makeInsertion(main, reference);

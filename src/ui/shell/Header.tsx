@@ -133,7 +133,7 @@ function ExportMenu() {
         label="Spectrum (CSV)"
         note="real and imaginary part, the reference run and H"
         disabled={nothing}
-        onSelect={exportSpectrum}
+        onSelect={() => void exportSpectrum()}
       />
       <MenuItem label="The sheet (PNG)" note="as it stands, with the field" onSelect={() => void exportSheetPicture()} />
       <DropdownMenu.Separator className="menu-line" />

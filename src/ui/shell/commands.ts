@@ -80,7 +80,7 @@ function jobCommands(examples: readonly Example[]): readonly BenchCommand[] {
       group: 'Job',
       label: 'Export spectrum (CSV)',
       also: ['download', 'insertion ratio', 'shielding effectiveness', 'frequency'],
-      run: exportSpectrum,
+      run: () => void exportSpectrum(),
     },
     {
       group: 'Job',
