@@ -76,7 +76,8 @@ export function amplitudeAt(run: SpectrumRun, probeId: string, name: string): Am
  * three periods of the lowest frequency but at most a quarter of it; the largest of several, for each alone may pass
  * through zero) is what they added
  * at f; if they decay by r from one to the next, what is still to come is r / (1 - r) of it, and no less than it where f is
- * off the ringing. Without decay it may go on for another record.
+ * off the ringing. Without decay it may go on for another record, unless it is the drive that goes on: then drive and field
+ * are cut off alike, and their ratio lacks only what would ring on after the drive, about as long as the field took to settle.
  */
 function addTraceNoise(power: Float64Array, samples: ArrayLike<number>, run: SpectrumRun): void {
   const { dtSeconds, frequenciesHertz } = run;
@@ -89,12 +90,28 @@ function addTraceNoise(power: Float64Array, samples: ArrayLike<number>, run: Spe
   const last = largest(samples, count - period, count);
   const before = largest(samples, count - 2 * period, count - period);
   const decay = before > last ? last / before : 1;
-  const toCome = decay < 1 ? Math.min(count / period, Math.max(1, decay / (1 - decay))) : count / period;
+  const ringing = decay < 1 ? Math.min(count / period, Math.max(1, decay / (1 - decay))) : count / period;
+  const toCome = decay > STEADY && driveGoesOn(run, count) ? settledAfter(samples, period, last) : ringing;
   const looks = END_STRETCHES.map((stretch) => Math.min(count, Math.round(stretch * period)));
   for (let k = 0; k < power.length; k++) {
     const tail = last === 0 ? 0 : toCome * largestEnd(samples, looks, frequenciesHertz[k]! * dtSeconds) * dtSeconds;
     power[k]! += rounding ** 2 + tail ** 2;
   }
+}
+
+/** A field driven on keeps at least this share of its size from one period to the next. */
+const STEADY = 0.9;
+
+/** A unit drive that goes on for the whole record has a spectrum of half its length at its frequency; a pulse, a tenth or less. */
+function driveGoesOn(run: SpectrumRun, count: number): boolean {
+  return strongestDrive(run) >= 0.25 * count * run.dtSeconds;
+}
+
+/** Periods until the largest sample of each stays within 1/e of what it is at the end. */
+function settledAfter(samples: ArrayLike<number>, period: number, last: number): number {
+  let from = samples.length - period;
+  while (from > 0 && Math.abs(largest(samples, from - period, from) - last) < last / Math.E) from -= period;
+  return Math.max(1, from / period);
 }
 
 /** Stretches looked at, in periods of the lowest frequency. */
@@ -129,11 +146,16 @@ export function decibels(ratio: number): number {
   return 20 * Math.log10(ratio);
 }
 
+function strongestDrive({ driveSpectrum: { re, im } }: SpectrumRun): number {
+  let most = 0;
+  for (let k = 0; k < re.length; k++) most = Math.max(most, Math.hypot(re[k]!, im[k]!));
+  return most;
+}
+
 /** Frequencies where the drive holds enough to divide by. */
 function strongDrive(run: SpectrumRun): (k: number) => boolean {
   const { re, im } = run.driveSpectrum;
-  let most = 0;
-  for (let k = 0; k < re.length; k++) most = Math.max(most, Math.hypot(re[k]!, im[k]!));
+  const most = strongestDrive(run);
   return (k) => Math.hypot(re[k]!, im[k]!) >= WEAKEST_DRIVE * most;
 }
 

@@ -10,10 +10,7 @@ function run(
   spectra: readonly (readonly [re: number, im: number])[],
   ringing: (n: number) => number = () => 0,
 ): SpectrumRun {
-  const samples = Float32Array.from(
-    { length: 2000 },
-    (_, n) => scale * Math.exp(-(((n - 200) / 40) ** 2)) + ringing(n),
-  );
+  const samples = Float32Array.from({ length: 2000 }, (_, n) => scale * Math.exp(-(((n - 200) / 40) ** 2)) + ringing(n));
   const spectrum = { re: spectra.map(([re]) => re), im: spectra.map(([, im]) => im) };
   return {
     components: ['Hz', 'Ex', 'Ey'],
@@ -110,4 +107,35 @@ test('the level is the field over the spectrum of the unit drive, 3.01 dB less i
   // 4e-11 / 1e-10 = 0.4 V/m peak = 112.04 dBuV/m; RMS is the peak over sqrt 2 (common practice).
   expect(levelCurve(main, 'p', 'Ey', false)!.db[0]).toBeCloseTo(112.0412, 3);
   expect(levelCurve(main, 'p', 'Ey', true)!.db[0]).toBeCloseTo(112.0412 - 3.0103, 3);
+});
+
+describe('a drive that goes on for the whole record', () => {
+  // Unit amplitude at 2 GHz for 20 ns: its spectrum there is half the record, 1e-8 / Hz (Fourier transform of a sine burst).
+  const driven = (scale: number, envelope: (n: number) => number): SpectrumRun => {
+    const flat: [number, number] = [0, 0];
+    const steady = run(
+      0,
+      [flat, [0, scale * 1e-8], flat],
+      (n) => scale * envelope(n) * Math.sin(2 * Math.PI * 2e9 * n * dtSeconds),
+    );
+    return { ...steady, driveSpectrum: { re: [0, 0, 0], im: [0, 1e-8, 0] } };
+  };
+  const settled = (n: number): number => 1 - Math.exp(-n / 50);
+
+  test('is read at its frequency once the field has settled', () => {
+    const curve = insertionCurve(driven(0.1, settled), driven(1, settled), 'p', 'Ey')!;
+    expect(curve.db[1]).toBeCloseTo(-20, 9);
+    expect([...curve.cause].map((cause) => CAUSES[cause])).toEqual([CAUSES[3], 'known', CAUSES[3]]);
+  });
+
+  test('is unknown while the field still builds up', () => {
+    const building = (n: number): number => n / 2000;
+    expect(insertionCurve(driven(0.1, building), driven(1, settled), 'p', 'Ey')!.cause[1]).toBe(1);
+    expect(insertionCurve(driven(0.1, settled), driven(1, building), 'p', 'Ey')!.cause[1]).toBe(2);
+  });
+
+  test('does not lend its trust to a field that rings on after a pulse', () => {
+    const ringing = { ...driven(0.1, settled), driveSpectrum: { re: [0, 0, 0], im: [0, 1e-10, 0] } };
+    expect(insertionCurve(ringing, driven(1, settled), 'p', 'Ey')!.cause[1]).toBe(1);
+  });
 });
