@@ -17,6 +17,7 @@ import {
 } from './curve-data.ts';
 import type { PlotLine } from './plot-controller.ts';
 import { Plot } from './Plot.tsx';
+import { differenceWords } from './difference-words.ts';
 import { numberWords } from './scale-words.ts';
 
 interface Props {
@@ -43,6 +44,8 @@ export function SpectrumPlot({ runs, choice, probeName, logarithmic }: Props) {
     [curves],
   );
   const title = titleOf(choice, probeName);
+  const unit = unitOf(choice);
+  const note = `${NOTES[choice.quantity]}${curves.length > 0 ? HATCHED : ''}`;
   return (
     <figure className="reading">
       <figcaption>
@@ -52,7 +55,7 @@ export function SpectrumPlot({ runs, choice, probeName, logarithmic }: Props) {
             <LegendEntry key={curve.id} curve={curve} />
           ))}
         </span>
-        <CursorWords curves={curves} cursors={cursors} onClear={() => setCursors([null, null])} />
+        <CursorWords curves={curves} unit={unit} cursors={cursors} onClear={() => setCursors([null, null])} />
       </figcaption>
       {curves.length === 0 ? (
         <div className="plot plot-empty">
@@ -61,9 +64,9 @@ export function SpectrumPlot({ runs, choice, probeName, logarithmic }: Props) {
       ) : (
         <Plot
           label={title}
-          wordsAt={(x) => cursorText(curves, x)}
+          wordsAt={(x) => cursorText(curves, unit, x)}
           xUnit="Hz"
-          yUnit={unitOf(choice)}
+          yUnit={unit}
           yPrefixed={false}
           logarithmic={logarithmic}
           lines={lines}
@@ -76,17 +79,21 @@ export function SpectrumPlot({ runs, choice, probeName, logarithmic }: Props) {
           theme={theme}
         />
       )}
-      <p className="reading-note">
-        {choice.quantity === 'insertion ratio'
-          ? 'Field with the parts over the field without them, at a point of a 2-D model: no shielding effectiveness in the sense of IEEE 299.'
-          : choice.quantity === 'level'
-            ? 'Steady field if the drive had, at that frequency alone, the amplitude given in the job.'
-            : 'Spectrum of the record: integral of f(t) exp(−jωt) dt, peak values.'}
-        {curves.length > 0 ? ' Hatched: hidden by the end of the record or by single precision.' : ''}
+      <p className="reading-note" title={note}>
+        {note}
       </p>
     </figure>
   );
 }
+
+/** The caution stands first: it must be seen also where there is room for one line only. */
+const NOTES: Readonly<Record<CurveChoice['quantity'], string>> = {
+  'insertion ratio':
+    'A point of a 2-D model: no shielding effectiveness in the sense of IEEE 299. Field with the parts over the field without them.',
+  level: 'Steady field if the drive had, at that frequency alone, the amplitude given in the job.',
+  spectrum: 'Spectrum of the record: integral of f(t) exp(−jωt) dt, peak values.',
+};
+const HATCHED = ' Hatched: hidden by the end of the record or by single precision.';
 
 function titleOf({ quantity, component }: CurveChoice, probeName: string): string {
   return `${quantity} at ${probeName}, ${component}`;
@@ -111,7 +118,14 @@ function LegendEntry({ curve }: { readonly curve: DrawnCurve }) {
   );
 }
 
-function CursorWords({ curves, cursors, onClear }: { curves: readonly DrawnCurve[]; cursors: Cursors; onClear: () => void }) {
+interface CursorWordsProps {
+  readonly curves: readonly DrawnCurve[];
+  readonly unit: string;
+  readonly cursors: Cursors;
+  readonly onClear: () => void;
+}
+
+function CursorWords({ curves, unit, cursors, onClear }: CursorWordsProps) {
   const first = curves[0];
   if (first === undefined) return null;
   if (cursors[0] === null && cursors[1] === null) {
@@ -124,11 +138,11 @@ function CursorWords({ curves, cursors, onClear }: { curves: readonly DrawnCurve
       {cursors.map((cursor, k) =>
         cursor === null ? null : (
           <span key={k}>
-            {formatQuantity(cursor, 'frequency', 5)} · {curves.map((curve) => wordsAt(curve, cursor)).join(' / ')}
+            {formatQuantity(cursor, 'frequency', 5)} · {curves.map((curve) => wordsAt(curve, unit, cursor)).join(' / ')}
           </span>
         ),
       )}
-      {a && b ? <span>Δ {numberWords(b.db - a.db, 2)} dB</span> : null}
+      {a && b ? <span>Δ {differenceWords(a, b)}</span> : null}
       <button className="link-button" onClick={onClear}>
         clear
       </button>
@@ -136,12 +150,12 @@ function CursorWords({ curves, cursors, onClear }: { curves: readonly DrawnCurve
   );
 }
 
-function cursorText(curves: readonly DrawnCurve[], cursor: number): string {
-  return `${formatQuantity(cursor, 'frequency', 5)}: ${curves.map((curve) => `${curve.name} ${wordsAt(curve, cursor)}`).join(', ')}`;
+function cursorText(curves: readonly DrawnCurve[], unit: string, cursor: number): string {
+  return `${formatQuantity(cursor, 'frequency', 5)}: ${curves.map((curve) => `${curve.name} ${wordsAt(curve, unit, cursor)}`).join(', ')}`;
 }
 
-function wordsAt(curve: DrawnCurve, frequencyHertz: number): string {
+function wordsAt(curve: DrawnCurve, unit: string, frequencyHertz: number): string {
   const reading = readAt(curve, frequencyHertz);
   if (reading === null) return '–';
-  return reading.cause === 0 ? `${numberWords(reading.db, 2)} dB` : `unknown (${CAUSES[reading.cause]})`;
+  return reading.cause === 0 ? `${numberWords(reading.db, 2)} ${unit}` : `unknown (${CAUSES[reading.cause]})`;
 }

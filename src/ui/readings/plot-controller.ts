@@ -4,7 +4,7 @@ import uPlot from 'uplot';
 import 'uplot/dist/uPlot.min.css';
 import { drawCursors, drawFloor, drawMarks, drawUnit } from './plot-drawing.ts';
 import { nearestIndex } from './nearest-index.ts';
-import { axisUnit, tickWords } from './scale-words.ts';
+import { axisUnit, tickWords, unevenTickWords } from './scale-words.ts';
 
 export interface PlotLine {
   readonly name: string;
@@ -111,8 +111,8 @@ function makePlot(element: HTMLElement, read: Read): uPlot {
   const axis = { stroke: colour('--soft'), font, grid: hair, ticks: { show: false }, gap: 4 };
   const largestOf = (splits: readonly number[]): number => Math.max(...splits.map(Math.abs));
   const words = (unit: string, prefixed: boolean) => (_: uPlot, splits: number[]) => {
-    const scale = prefixed ? axisUnit(largestOf(splits.filter((value) => value !== null)), unit) : { factor: 1, unit };
-    const texts = tickWords(splits, scale.factor);
+    const scale = prefixed ? axisUnit(largestOf(splits), unit) : { factor: 1, unit };
+    const texts = logarithmic ? unevenTickWords(splits, scale.factor) : tickWords(splits, scale.factor);
     // The unit stands once, at the last tick.
     return texts.map((text, k) => (k === texts.length - 1 ? `${text} ${scale.unit}` : text));
   };
@@ -132,7 +132,7 @@ function makePlot(element: HTMLElement, read: Read): uPlot {
         size: 26,
         space: 52,
         values: words(xUnit, true),
-        ...(logarithmic ? { splits: (_: uPlot, __: number, min: number, max: number) => logarithmicTicks(min, max) } : {}),
+        ...(logarithmic ? logarithmicAxis : {}),
       },
       {
         ...axis,
@@ -172,6 +172,12 @@ function paddedRange(min: number | null, max: number | null): [number, number] {
   const pad = span > 0 ? 0.06 * span : Math.max(1e-30, Math.abs(max) * 0.1 || 1);
   return [min - pad, max + pad];
 }
+
+/** The splits chosen are the ones wanted: uPlot's own filter would blank most of them. */
+const logarithmicAxis: Pick<uPlot.Axis, 'splits' | 'filter'> = {
+  splits: (_: uPlot, __: number, min: number, max: number) => logarithmicTicks(min, max),
+  filter: (_: uPlot, splits: number[]) => splits,
+};
 
 /** 1, 2, 5 of each decade in sight, or linear steps when less than a decade is. */
 function logarithmicTicks(min: number, max: number): number[] {

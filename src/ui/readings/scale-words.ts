@@ -27,6 +27,11 @@ export function tickWords(values: readonly number[], factor: number): string[] {
   return values.map((value) => (value / factor).toFixed(digits).replace('-', '−'));
 }
 
+/** Ticks of a logarithmic axis stand at uneven steps: each takes the digits it needs. */
+export function unevenTickWords(values: readonly number[], factor: number): string[] {
+  return values.map((value) => String(Number((value / factor).toPrecision(3))));
+}
+
 export function numberWords(value: number, digits: number): string {
   return value.toFixed(digits).replace('-', '−');
 }

@@ -11,7 +11,8 @@ import {
   type DrawnRun,
 } from '../../../../src/ui/readings/curve-data.ts';
 import { mergeColumns } from '../../../../src/ui/readings/merge-columns.ts';
-import { axisUnit, tickWords } from '../../../../src/ui/readings/scale-words.ts';
+import { differenceWords } from '../../../../src/ui/readings/difference-words.ts';
+import { axisUnit, tickWords, unevenTickWords } from '../../../../src/ui/readings/scale-words.ts';
 import { describeState } from '../../../../src/ui/readings/state-words.ts';
 import { NO_PROGRESS } from '../../../../src/app/run-store.ts';
 import type { RunRecord } from '../../../../workers/protocol.ts';
@@ -118,6 +119,16 @@ test('an axis takes one SI prefix and as few digits as tell ticks apart', () => 
   expect(tickWords([8.2e9, 8.4e9], 1e9)).toEqual(['8.2', '8.4']);
 });
 
+test('ticks at uneven steps, as on a logarithmic axis, keep their own digits', () => {
+  expect(unevenTickWords([8e8, 1e9, 2e9, 6e9], 1e9)).toEqual(['0.8', '1', '2', '6']);
+});
+
+test('two cursors read a difference only where both are known', () => {
+  expect(differenceWords({ db: -10, cause: 0 }, { db: -14.5, cause: 0 })).toBe('−4.50 dB');
+  expect(differenceWords({ db: -10, cause: 0 }, { db: -14.5, cause: 1 })).toBe('unknown');
+  expect(differenceWords({ db: -10, cause: 3 }, { db: -14.5, cause: 0 })).toBe('unknown');
+});
+
 describe('the state of a reading is said in words', () => {
   const main = record([1e9], [1], [1]);
   const base = { main, reference: main, referenceState: 'done', stale: false, progress: NO_PROGRESS } as const;
@@ -134,5 +145,19 @@ describe('the state of a reading is said in words', () => {
     );
     expect(describeState({ ...base, reference: null, referenceState: 'failed' }, 'insertion ratio')).toMatch(/failed/);
     expect(describeState({ ...base, main: { ...main, stopReason: 'time limit', energyDb: -31.4 } }, 'level')).toMatch(/−31 dB/);
+  });
+
+  test('a run under way does not own the curve of the run before', () => {
+    const running = { ...base, progress: { ...NO_PROGRESS, state: 'running' } } as const;
+    expect(describeState(running, 'level')).toMatch(/run before/);
+    expect(describeState({ ...running, main: null }, 'level')).toMatch(/when the run has ended/);
+  });
+
+  test('a reference run that went wrong or was cut short is named for the ratio, and only for the ratio', () => {
+    const broken = { ...base, reference: { ...main, trouble: 'the field grew at step 9' } };
+    expect(describeState(broken, 'insertion ratio')).toMatch(/reference run went wrong: the field grew at step 9/);
+    expect(describeState(broken, 'level')).toBe('');
+    const short = { ...base, reference: { ...main, stopReason: 'stopped by the person' as const } };
+    expect(describeState(short, 'insertion ratio')).toMatch(/reference run was stopped by hand/);
   });
 });
