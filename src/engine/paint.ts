@@ -1,6 +1,6 @@
 // Owns what is visible of the parts once they are painted over each other: disjoint regions, one per medium.
 // Must not know grids or coefficients.
-import { Clipper, FillRule, type Paths64 } from 'clipper2-ts';
+import { intersect, subtract, unite, type WholePaths } from '../base/clip-paths.ts';
 import type { Medium, Outline, ResolvedPart, XY } from '../model/job.ts';
 
 /** Rings in metres from the sheet's lower left corner, inside the sheet; areas by the nonzero rule. */
@@ -24,15 +24,15 @@ interface Sized {
  */
 export function paintParts(parts: readonly ResolvedPart[], sheet: Sized): Region[] {
   const unit = Math.max(sheet.widthMetres, sheet.heightMetres) / STEPS;
-  const board: Paths64 = [rectangle(0, 0, Math.round(sheet.widthMetres / unit), Math.round(sheet.heightMetres / unit))];
+  const board: WholePaths = [rectangle(0, 0, Math.round(sheet.widthMetres / unit), Math.round(sheet.heightMetres / unit))];
   const byMedium = new Map<string, { medium: Medium; rings: XY[][] }>();
-  let covered: Paths64 = [];
+  let covered: WholePaths = [];
   for (let k = parts.length - 1; k >= 0; k--) {
     const part = parts[k]!;
-    const drawn = Clipper.intersect(toSteps(part.outline, sheet.originMetres, unit), board, FillRule.NonZero);
+    const drawn = intersect(toSteps(part.outline, sheet.originMetres, unit), board);
     if (drawn.length === 0) continue;
-    const visible = covered.length === 0 ? drawn : Clipper.difference(drawn, covered, FillRule.NonZero);
-    if (k > 0) covered = covered.length === 0 ? drawn : Clipper.union(covered, drawn, FillRule.NonZero);
+    const visible = covered.length === 0 ? drawn : subtract(drawn, covered);
+    if (k > 0) covered = covered.length === 0 ? drawn : unite(covered, drawn);
     if (visible.length === 0) continue;
     const key = part.medium.metal ? 'metal' : JSON.stringify(part.medium);
     const region = byMedium.get(key) ?? { medium: part.medium, rings: [] };
@@ -51,7 +51,7 @@ function rectangle(left: number, bottom: number, right: number, top: number) {
   ];
 }
 
-function toSteps(outline: Outline, origin: XY, unit: number): Paths64 {
+function toSteps(outline: Outline, origin: XY, unit: number): WholePaths {
   return outline.map((ring) =>
     ring.map(([x, y]) => ({ x: Math.round((x + origin[0]) / unit), y: Math.round((y + origin[1]) / unit) })),
   );

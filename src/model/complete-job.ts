@@ -50,7 +50,7 @@ class Naming {
 }
 
 function completePart(draft: DraftPart, naming: Naming): Part {
-  return { ...draft, ...naming.name(draft, draft.kind, true) } as Part;
+  return { ...draft, ...naming.name(draft, draft.kind, true) };
 }
 
 function completeDrive(draft: DraftDrive, naming: Naming, section: Section): Drive {

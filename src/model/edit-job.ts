@@ -3,7 +3,7 @@
 import type { Result } from '../base/result.ts';
 import { fail, ok } from '../base/result.ts';
 import { formatQuantity, parseQuantity } from '../base/quantity.ts';
-import type { Drive, EdgeKind, EdgeName, Job, Part, Probe, Section } from './job.ts';
+import type { Drive, EdgeName, Job, Part, Probe, Section } from './job.ts';
 import { newId, newName } from './new-job.ts';
 import { movePoint } from './parts/points.ts';
 import { movePart, PART_KINDS } from './parts/registry.ts';
@@ -52,7 +52,7 @@ export function setAt(job: Job, path: Path, value: unknown): Result<unknown> {
   if (path.length === 3 && first === 'sheet' && second === 'edges' && isEdgeName(edge)) {
     const other = OPPOSITE[edge];
     const edges: Record<EdgeName, unknown> = { ...job.sheet.edges, [edge]: value };
-    if (value === 'repeating' || job.sheet.edges[other] === 'repeating') edges[other] = value as EdgeKind;
+    if (value === 'repeating' || job.sheet.edges[other] === 'repeating') edges[other] = value;
     return ok({ ...job, sheet: { ...job.sheet, edges } });
   }
   return replaceAt(job, path, value, []);

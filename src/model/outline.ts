@@ -1,7 +1,7 @@
 // Owns closed outlines in metres: circles, unions, offsets of lines, area, containment.
 // Must not know parts, jobs, or the grid.
-import { Clipper, EndType, FillRule, JoinType } from 'clipper2-ts';
-import type { Paths64 } from 'clipper2-ts';
+import { thicken, unite, type LineEnds, type WholePaths } from '../base/clip-paths.ts';
+import { simplifyPath } from './simplify-path.ts';
 import type { Outline, XY } from './job.ts';
 
 type Ring = readonly XY[];
@@ -94,11 +94,11 @@ function chooseStepsPerMetre(points: readonly XY[], reachMetres: number): number
   return Math.max(1e9, 10 ** Math.floor(9 - Math.log10(extent)));
 }
 
-function toSteps(rings: readonly Ring[], stepsPerMetre: number): Paths64 {
+function toSteps(rings: readonly Ring[], stepsPerMetre: number): WholePaths {
   return rings.map((ring) => ring.map(([x, y]) => ({ x: Math.round(x * stepsPerMetre), y: Math.round(y * stepsPerMetre) })));
 }
 
-function fromSteps(paths: Paths64, stepsPerMetre: number): Outline {
+function fromSteps(paths: WholePaths, stepsPerMetre: number): Outline {
   return paths.map((path) => path.map(({ x, y }): XY => [x / stepsPerMetre, y / stepsPerMetre]));
 }
 
@@ -160,7 +160,7 @@ export function makeRingOutline(points: readonly XY[]): Outline {
   if (ring.length < 3) return [];
   if (isSimple(ring)) return signedArea(ring) === 0 ? [] : [orient(ring, true)];
   const steps = chooseStepsPerMetre(ring, 0);
-  return fromSteps(Clipper.union(toSteps([ring], steps), FillRule.NonZero), steps);
+  return fromSteps(unite(toSteps([ring], steps)), steps);
 }
 
 /** A line given a thickness: ends cut square and corners mitred, or both round. A closed line has no ends. */
@@ -175,10 +175,13 @@ export function makeLineOutline(points: readonly XY[], thickness: number, style:
   if (closed) line.pop();
   const half = thickness / 2;
   const steps = chooseStepsPerMetre(line, half);
-  const end = closed ? EndType.Joined : style === 'square' ? EndType.Butt : EndType.Round;
-  const path = toSteps([line], steps);
-  if (style === 'square') return fromSteps(Clipper.inflatePaths(path, half * steps, JoinType.Miter, end, MITRE_LIMIT), steps);
-  return fromSteps(paintStroke(path, half * steps, end), steps);
+  const ends = closed ? 'joined' : style;
+  if (style === 'square') {
+    return fromSteps(thicken(toSteps([line], steps), half * steps, ends, { mitreLimit: MITRE_LIMIT }), steps);
+  }
+  // The shake of a hand under the width of the arcs' own sagitta changes nothing but the work.
+  const steady = toSteps([simplifyPath(line, SAGITTA * half)], steps);
+  return fromSteps(paintStroke(steady, half * steps, ends), steps);
 }
 
 /** Points of a stroke painted at once. */
@@ -188,25 +191,19 @@ const POINTS_PER_STRETCH = 32;
  * A round brush along a line. Stretches are painted apart and joined two by two: where a hand has scribbled over the same
  * place many times, most of the outline is gone before it meets the rest (3000 points of scribble: 0.6 s, not 8 s).
  */
-function paintStroke(path: Paths64, radius: number, end: EndType): Paths64 {
-  const tolerance = SAGITTA * radius;
-  // The shake of a hand under the width of the arcs' own sagitta changes nothing but the work.
-  const steady = Clipper.ramerDouglasPeuckerPaths(path, tolerance);
-  const [points = []] = steady;
-  const paint = (stretch: Paths64, ends: EndType): Paths64 =>
-    Clipper.inflatePaths(stretch, radius, JoinType.Round, ends, MITRE_LIMIT, tolerance);
-  if (points.length <= POINTS_PER_STRETCH) return paint(steady, end);
-  const round = end === EndType.Joined ? [...points, ...points.slice(0, 1)] : points;
-  let painted: Paths64[] = [];
+function paintStroke(path: WholePaths, radius: number, ends: LineEnds): WholePaths {
+  const [points = []] = path;
+  const corners = { arcTolerance: SAGITTA * radius };
+  if (points.length <= POINTS_PER_STRETCH) return thicken(path, radius, ends, corners);
+  const round = ends === 'joined' ? [...points, ...points.slice(0, 1)] : points;
+  let painted: WholePaths[] = [];
   for (let from = 0; from < round.length - 1; from += POINTS_PER_STRETCH - 1) {
-    painted.push(paint([round.slice(from, from + POINTS_PER_STRETCH)], EndType.Round));
+    painted.push(thicken([round.slice(from, from + POINTS_PER_STRETCH)], radius, 'round', corners));
   }
   while (painted.length > 1) {
     const pairs = painted;
     painted = [];
-    for (let k = 0; k < pairs.length; k += 2) {
-      painted.push(Clipper.union([...(pairs[k] ?? []), ...(pairs[k + 1] ?? [])], FillRule.NonZero));
-    }
+    for (let k = 0; k < pairs.length; k += 2) painted.push(unite(pairs[k] ?? [], pairs[k + 1]));
   }
   return painted[0] ?? [];
 }

@@ -3,6 +3,7 @@
 import type { ResolvedJob, XY } from '../../model/job.ts';
 import { sheetBox } from './layers/edges-layer.ts';
 import { snapStep } from './ticks.ts';
+import { distanceToSegment, project } from '../../model/segment.ts';
 
 /** Pointer and target are one within this distance. */
 const REACH_PIXELS = 9;
@@ -122,18 +123,6 @@ function placeOnLine(at: XY, { from, to }: SnapLine, step: number): XY {
 
 function clamp(value: number, a: number, b: number): number {
   return Math.min(Math.max(value, Math.min(a, b)), Math.max(a, b));
-}
-
-function project(at: XY, from: XY, to: XY): XY {
-  const [dx, dy] = [to[0] - from[0], to[1] - from[1]];
-  const square = dx * dx + dy * dy;
-  const t = square === 0 ? 0 : clamp(((at[0] - from[0]) * dx + (at[1] - from[1]) * dy) / square, 0, 1);
-  return [from[0] + t * dx, from[1] + t * dy];
-}
-
-export function distanceToSegment(at: XY, from: XY, to: XY): number {
-  const [x, y] = project(at, from, to);
-  return Math.hypot(at[0] - x, at[1] - y);
 }
 
 /** Nearest multiple of `step`, by index so that 0.3 is 0.3 and not 0.30000000000000004. */

@@ -4,7 +4,7 @@ import type { Job, Part, ResolvedJob, ResolvedPart, XY } from '../../model/job.t
 import { outlineBounds, partContains } from '../../model/outline.ts';
 import { planeWaveFront } from './layers/drives-layer.ts';
 import { sheetBox } from './layers/edges-layer.ts';
-import { distanceToSegment } from './snap.ts';
+import { distanceToSegment } from '../../model/segment.ts';
 import type { Box } from './viewport.ts';
 
 /** A thing is under the pointer within this distance of its line or point. */

@@ -4,7 +4,7 @@ import type { PartKind, XY } from '../../../model/job.ts';
 import { makeSnapTargets, roundTo, snapTo } from '../snap.ts';
 import { snapStep } from '../ticks.ts';
 import { fieldsOf, findProblem, isLine, liveValues, partOf, samePlace, targetOf, type Draft } from './draft.ts';
-import { simplifyPath } from './simplify-path.ts';
+import { simplifyPath } from '../../../model/simplify-path.ts';
 import { arrowShift, RECORD, type ToolAction, type ToolContext, type ToolInput, type ToolStep, type TypedBox } from './tool.ts';
 import { isTyping, NOTHING_TYPED, typeKey } from './typed-values.ts';
 

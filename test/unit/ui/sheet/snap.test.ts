@@ -1,7 +1,7 @@
 // Owns the facts of snapping.
 import { describe, expect, test } from 'vitest';
 import { constrainAngle, makeSnapTargets, roundTo, snapTo } from '../../../../src/ui/sheet/snap.ts';
-import { simplifyPath } from '../../../../src/ui/sheet/tools/simplify-path.ts';
+import { simplifyPath } from '../../../../src/model/simplify-path.ts';
 import { makeTestJob, mm, resolved } from './sheet-fixture.ts';
 
 const TARGETS = makeSnapTargets(resolved(makeTestJob()));

@@ -1,7 +1,7 @@
 // Owns thinning a freehand path: fewer points, none further from the drawn line than a tolerance.
 // Must not know the DOM, stores, or parts.
-import type { XY } from '../../../model/job.ts';
-import { distanceToSegment } from '../snap.ts';
+import type { XY } from './job.ts';
+import { distanceToSegment } from './segment.ts';
 
 /** Ramer (1972), Douglas & Peucker (1973); with a stack, since a long scribble would overflow recursion. */
 export function simplifyPath(points: readonly XY[], tolerance: number): readonly XY[] {
