@@ -79,6 +79,7 @@ export function estimateOf(
       ...grid.remarks,
       ...resolutionRemarks(job, grid, cellsPerShortestWavelength),
       ...probeRemarks(job, grid, launches),
+      ...driveRemarks(job),
       ...more,
     ],
   };
@@ -149,4 +150,17 @@ function probeRemarks(job: ResolvedJob, grid: Grid, launches: ReadonlyMap<string
     }
   }
   return remarks;
+}
+
+function driveRemarks(job: ResolvedJob): Remark[] {
+  const [first, ...others] = job.drives;
+  if (first === undefined || others.every((drive) => JSON.stringify(drive.waveform) === JSON.stringify(first.waveform)))
+    return [];
+  return [
+    {
+      code: 'several waveforms',
+      path: first.id,
+      message: `The drives have different waveforms: levels are read against that of ${first.name}; insertion ratios are those of all together.`,
+    },
+  ];
 }

@@ -69,13 +69,12 @@ export function amplitudeAt(run: SpectrumRun, probeId: string, name: string): Am
 }
 
 /**
- * Adds the square of what a spectrum of this trace cannot show, (field / Hz)^2, as an upper estimate.
+ * Adds the square of what a spectrum of this trace cannot show, (field / Hz)^2: an estimate on the safe side, no bound.
  * Single precision: each step rounds the field by up to 2^-24 of its size; over the record these add like a random walk,
  * 2^-24 dt sqrt(sum x^2), at every frequency alike.
  * Truncation: what the record cuts off goes on as its end does. The transform of the last stretches of the record (one to
  * three periods of the lowest frequency but at most a quarter of it; the largest of several, for each alone may pass
- * through zero) is what they added
- * at f; if they decay by r from one to the next, what is still to come is r / (1 - r) of it, and no less than it where f is
+ * through zero) is what they added at f; if they decay by r from one to the next, what is still to come is r / (1 - r) of it, and no less than it where f is
  * off the ringing. Without decay it may go on for another record, unless it is the drive that goes on: then drive and field
  * are cut off alike, and their ratio lacks only what would ring on after the drive, about as long as the field took to settle.
  */
