@@ -24,11 +24,24 @@ async function runOnMachine(milliseconds: number): Promise<RunRecord> {
   return record.value;
 }
 
+/** Every sample and every spectral value, in order. */
+function numbersOf({ traces, spectra }: RunRecord): number[] {
+  return [
+    ...traces.flatMap(({ samples }) => samples.flatMap((channel) => [...channel])),
+    ...spectra.flatMap(({ components }) => components.flatMap(({ re, im }) => [...re, ...im])),
+  ];
+}
+
+function firstDifference(a: readonly number[], b: readonly number[]): { at: number; a: number; b: number } | null {
+  const at = a.findIndex((value, k) => !Object.is(value, b[k]));
+  return at < 0 ? null : { at, a: a[at] ?? Number.NaN, b: b[at] ?? Number.NaN };
+}
+
 test('a run that ends by decay has the same samples and spectra on a fast machine and on a slow one', async () => {
   const [fast, slow] = [await runOnMachine(0.1), await runOnMachine(5)];
   expect(slow.stopReason).toBe('decayed');
   expect(slow.steps).toBe(fast.steps);
-  expect(slow.traces).toEqual(fast.traces);
-  expect(slow.spectra).toEqual(fast.spectra);
+  expect(numbersOf(slow).length).toBeGreaterThan(10_000);
+  expect(firstDifference(numbersOf(slow), numbersOf(fast))).toBeNull();
   expect(slow.energyDb).toBe(fast.energyDb);
 });
