@@ -1,6 +1,6 @@
 // Owns the summary of a run for programs to read: grid, step, time, energy left, memory, throughput, H at the listed frequencies.
 // Must not know how it is saved or how H is found.
-import type { Remark } from '../engine/estimate.ts';
+import type { Remark } from '../engine/remark.ts';
 import type { ExportedInsertion } from '../model/exports/spectrum-csv.ts';
 import { hashJob } from '../model/job-hash.ts';
 import type { Job } from '../model/job.ts';

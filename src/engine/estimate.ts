@@ -5,14 +5,7 @@ import type { ResolvedJob } from '../model/job.ts';
 import { checkFeasible } from './feasible.ts';
 import { makeGrid, type Grid } from './grid.ts';
 import type { Launch } from './plane-wave.ts';
-
-/** A remark on the job that does not forbid the run, or the reason why it is refused. */
-export interface Remark {
-  readonly code: string;
-  readonly message: string;
-  /** Job path or part id it belongs to, when there is one. */
-  readonly path?: string;
-}
+import type { Remark } from './remark.ts';
 
 export interface Estimate {
   /** Cells of the sheet itself. */

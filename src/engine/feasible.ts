@@ -3,10 +3,9 @@
 import { fail, ok, type Result } from '../base/result.ts';
 import type { ResolvedJob } from '../model/job.ts';
 import type { Grid } from './grid.ts';
-import { align } from './image.ts';
+import { align, rowStride } from './image.ts';
 import { HEADER_WORDS } from './layout.ts';
 import { chooseLaunch, type Launch } from './plane-wave.ts';
-import { rowStride } from './row-program.ts';
 
 /** Steps in one call of the kernel: tables of drives and records are this long. */
 export const SLICE_STEPS = 256;

@@ -3,7 +3,7 @@
 import { C0 } from '../base/constants.ts';
 import { fail, ok, type Result } from '../base/result.ts';
 import type { EdgeKind, Medium, ResolvedJob, Section } from '../model/job.ts';
-import type { Remark } from './estimate.ts';
+import type { Remark } from './remark.ts';
 
 /** One axis of the lattice. Positions in metres from the sheet's left or bottom edge; absorbers lie outside the sheet. */
 export interface Axis {

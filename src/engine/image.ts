@@ -1,5 +1,6 @@
 // Owns the making of a memory image: a growing table of words that ends as the bytes the kernel reads.
 // Must not know physics.
+import { PAD_COLUMNS } from './layout.ts';
 
 /** Collects the fixed part of an image, which begins at `origin`; offsets are bytes from the image's start, multiples of 16. */
 export class ImageWriter {
@@ -75,4 +76,9 @@ function viewsOf(bytes: ArrayBuffer) {
 
 export function align(bytes: number): number {
   return Math.ceil(bytes / 16) * 16;
+}
+
+/** Floats of one row of a field: pad, unknowns, the last link, filled to whole groups of four. */
+export function rowStride(unknowns: number): number {
+  return PAD_COLUMNS + align(4 * (unknowns + 1)) / 4;
 }

@@ -3,16 +3,17 @@
 import { fail, ok, type Result } from '../base/result.ts';
 import type { ResolvedJob } from '../model/job.ts';
 import { makeCoefficients, type CoefficientRow, type Coefficients } from './coefficients.ts';
-import { estimateOf, type Estimate, type Remark } from './estimate.ts';
+import { estimateOf, type Estimate } from './estimate.ts';
+import type { Remark } from './remark.ts';
 import { makeGrid, type Grid } from './grid.ts';
 import { hashText } from './hash.ts';
 import { BLOCK_STEPS, checkFeasible, SLICE_STEPS } from './feasible.ts';
-import { align, ImageWriter, StateRoom } from './image.ts';
+import { align, ImageWriter, rowStride, StateRoom } from './image.ts';
 import * as L from './layout.ts';
 import { paintParts } from './paint.ts';
 import { makeFaceTerms, makeIncidentLine, type IncidentLine, type Launch } from './plane-wave.ts';
 import { makeProbeTaps, nodeShares } from './probe-taps.ts';
-import { rowStride, writeRowPrograms, type PointTerm } from './row-program.ts';
+import { writeRowPrograms, type PointTerm } from './row-program.ts';
 import { makeWaveform, waveformEnd, type Waveform } from './waveform.ts';
 
 export type RunRole = 'main' | 'reference';

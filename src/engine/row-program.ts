@@ -3,7 +3,7 @@
 import type { AbsorberProfile } from './absorber.ts';
 import type { CoefficientRow, Coefficients } from './coefficients.ts';
 import type { Grid } from './grid.ts';
-import { align, type ImageWriter } from './image.ts';
+import type { ImageWriter } from './image.ts';
 import * as L from './layout.ts';
 
 /** A term of a drive on one unknown of a row, ready for the image. */
@@ -298,9 +298,4 @@ function stripTable(parts: RowParts, first: number, count: number): number {
   });
   parts.stripTables.set(key, at);
   return at;
-}
-
-/** Bytes of one row of a field: pad, unknowns, the last link, filled to whole groups of four. */
-export function rowStride(unknowns: number): number {
-  return L.PAD_COLUMNS + align(4 * (unknowns + 1)) / 4;
 }

@@ -1,7 +1,7 @@
 // Owns where in the Brief a remark or an error stands: beside the thing or under the heading it belongs to.
 // Must not know how remarks look.
 import type { AppError } from '../../base/result.ts';
-import type { Remark } from '../../engine/estimate.ts';
+import type { Remark } from '../../engine/remark.ts';
 import type { Job } from '../../model/job.ts';
 import { materialRemarks, referenceRemarks } from '../../model/remarks.ts';
 

@@ -2,7 +2,8 @@
 // Must not know uPlot.
 import { useEffect, useRef } from 'react';
 import { nearestIndex } from './nearest-index.ts';
-import { PlotController, type PlotContent } from './plot-controller.ts';
+import type { PlotContent } from './plot-content.ts';
+import { PlotController } from './plot-controller.ts';
 
 export interface PlotProps extends PlotContent {
   readonly label: string;

@@ -15,7 +15,7 @@ import {
   type DrawnCurve,
   type DrawnRun,
 } from './curve-data.ts';
-import type { PlotLine } from './plot-controller.ts';
+import type { PlotLine } from './plot-content.ts';
 import { Plot } from './Plot.tsx';
 import { differenceWords } from './difference-words.ts';
 import { numberWords } from './scale-words.ts';

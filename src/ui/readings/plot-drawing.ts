@@ -2,7 +2,7 @@
 // Must not know React or what the numbers mean.
 import type uPlot from 'uplot';
 import { nearestIndex } from './nearest-index.ts';
-import type { PlotContent } from './plot-controller.ts';
+import type { PlotContent } from './plot-content.ts';
 import { axisUnit } from './scale-words.ts';
 
 /** The zone under the floor is hatched: what lies there is not known. */
