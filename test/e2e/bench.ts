@@ -79,6 +79,7 @@ export class Bench {
   async waitForEnd(): Promise<void> {
     await expect(this.runStrip.getByText(/ended/)).toBeVisible({ timeout: 45_000 });
     await expect(this.runStrip.getByText('the job has changed since')).toBeHidden();
+    await expect(this.page.getByText('The reference run is under way.')).toHaveCount(0, { timeout: 45_000 });
   }
 
   /** The time step the run strip stands at. */
