@@ -18,8 +18,9 @@ export async function runToEnd(
   await session.start();
   for (;;) {
     const { progress } = await session.poll({ view: null, maxWidth: 0, maxHeight: 0, sinceStep: Number.MAX_SAFE_INTEGER });
-    if (onProgress?.(progress) === false) await session.stop();
-    else if (progress.state === 'done') break;
+    const goOn = onProgress?.(progress) !== false;
+    if (progress.state === 'done') break;
+    if (!goOn) await session.stop();
     else await new Promise((resolve) => setTimeout(resolve, POLL_MILLISECONDS));
   }
   return session.record();

@@ -265,7 +265,16 @@ export class RunController {
   private publishReference(): void {
     const { state, record, errors } = this.reference;
     const answered = useRunStore.getState().answeredJob === this.open?.job;
-    useRunStore.setState(answered && state === 'done' ? { referenceState: state, reference: record } : { referenceState: state });
+    if (answered && state === 'done') {
+      // A run kept before its reference had ended gets it too.
+      useRunStore.setState(({ main, kept }) => ({
+        referenceState: state,
+        reference: record,
+        kept: kept.map((run) => (run.main === main && run.reference === null ? { ...run, reference: record } : run)),
+      }));
+    } else {
+      useRunStore.setState({ referenceState: state });
+    }
     if (state === 'failed') this.complain(errors);
   }
 

@@ -17,8 +17,6 @@ import type { Drive, Job, OwnMaterial, Part, Probe, Quantity } from './job.ts';
 import { validateJob } from './parse-job.ts';
 import { copyPlainData } from './plain-data.ts';
 
-export type ListName = 'parts' | 'drives' | 'probes' | 'materials';
-
 /** Things on the sheet are named by their ids; ids are unique over parts, drives, probes and own materials. */
 export type Command =
   /** Any single value: `set(['parts', 2, 'thickness'], '2 mm')`. The result must still be a valid job. */

@@ -1,6 +1,7 @@
 import { afterEach, beforeEach, expect, test } from 'vitest';
 import { latestFrame, publishFrame } from '../../../src/app/frame-channel.ts';
 import { useJobStore } from '../../../src/app/job-store.ts';
+import { keepRun } from '../../../src/app/run-book.ts';
 import { RunController } from '../../../src/app/run-controller.ts';
 import { NO_PROGRESS, useRunStore } from '../../../src/app/run-store.ts';
 import { useViewStore } from '../../../src/app/view-store.ts';
@@ -65,6 +66,17 @@ test('a run ends with both records, all samples and the job they answer', async 
   expect(run().answeredJob).toBe(useJobStore.getState().job);
   expect(run().liveCount).toBe(41);
   expect([...(run().liveTraces[0]?.samples[0] ?? [])].slice(0, 41)).toEqual(Array.from({ length: 41 }, (_, n) => n));
+});
+
+test('a run kept before its reference has ended gets the reference when it has', async () => {
+  const { controller } = makeBench([new FakeSolver(20), new FakeSolver(4000)]);
+  const going = controller.run();
+  while (run().main === null) await turn();
+  keepRun('early');
+  expect(run().kept[0]?.reference).toBeNull();
+  await going;
+  while (run().referenceState !== 'done') await turn();
+  expect(run().kept[0]?.reference?.role).toBe('reference');
 });
 
 test('there is never more than one look at the solver under way', async () => {
