@@ -1,6 +1,6 @@
 // Owns the published JSON Schema, made from the validator.
 // Must not know files.
-import { z } from 'zod';
+import * as z from 'zod/mini';
 import { JOB_SCHEMA } from './job-schema.ts';
 
 /** What a person may write: everything with a default may be left out. Draft 2020-12, as text. */

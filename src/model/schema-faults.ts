@@ -1,6 +1,6 @@
 // Owns turning what the schema finds into errors a person can act on: path, value, mend.
 // Must not know the schema itself.
-import type { z } from 'zod';
+import type { z } from 'zod/mini';
 import type { AppError } from '../base/result.ts';
 import { findNearestWord } from '../base/nearest-word.ts';
 import { writePath } from './plain-data.ts';
