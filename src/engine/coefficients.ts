@@ -33,11 +33,14 @@ export interface Coefficients {
   readonly vScale: number;
 }
 
-/** Scales that bring u and v of a travelling wave to the same size, so that single precision is used evenly. */
+/**
+ * Scales by which the links of an empty sheet of square cells get b = 1, so that the kernel need not multiply there; u and v
+ * of a travelling wave stay of one size, so that single precision is used evenly. `pace` is c0 dt in metres.
+ */
 export function kernelScales(grid: Grid): { uScale: number; vScale: number; pace: number } {
-  const h = Math.sqrt(grid.dxMetres * grid.dyMetres);
   const eOut = grid.section === 'E out of plane';
-  return { uScale: eOut ? 1 : ETA0, vScale: eOut ? ETA0 / h : 1 / h, pace: C0 * grid.dtSeconds * h };
+  const pace = C0 * grid.dtSeconds;
+  return { uScale: eOut ? 1 : ETA0, vScale: (eOut ? ETA0 : 1) / pace, pace };
 }
 
 export function makeCoefficients(
@@ -91,12 +94,12 @@ export function makeCoefficients(
       if (hasU && metal?.uDead[row * x.count + i] !== 1) {
         const loss = (uLoss * seen.uS[i]!) / seen.uM[i]!;
         out.au[i] = (1 - loss) / (1 + loss);
-        out.bu[i] = pace / (seen.uM[i]! * sideX * sideY * (1 + loss));
+        out.bu[i] = (pace * pace) / (seen.uM[i]! * sideX * sideY * (1 + loss));
       }
       if (openX && metal?.xBlocked[row * x.count + i] !== 1) {
         const loss = (vLoss * seen.xS[i]!) / seen.xM[i]!;
         out.avx[i] = (1 - loss) / (1 + loss);
-        out.bvx[i] = ((pace / (grid.dxMetres * grid.dyMetres)) * sideX) / (seen.xM[i]! * riseY * (1 + loss));
+        out.bvx[i] = sideX / (seen.xM[i]! * riseY * (1 + loss));
       }
     }
     let wrap: [number, number] | null = null;
@@ -105,7 +108,7 @@ export function makeCoefficients(
       const riseX = x.linkLength[i]! * absorbX.link.kappa[i]!;
       const loss = (vLoss * seen.yS[i]!) / seen.yM[i]!;
       const a = (1 - loss) / (1 + loss);
-      const b = ((pace / (grid.dxMetres * grid.dyMetres)) * sideY) / (seen.yM[i]! * riseX * (1 + loss));
+      const b = sideY / (seen.yM[i]! * riseX * (1 + loss));
       if (x.repeats && (i === 0 || i === x.count)) {
         if (i === 0) wrap = [Math.fround(a), Math.fround(b)];
       } else {

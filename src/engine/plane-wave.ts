@@ -236,7 +236,6 @@ export function makeIncidentLine(
   const stepMetres = mx !== 0 ? (dxMetres * Math.cos(angleRadians)) / mx : (dyMetres * Math.sin(angleRadians)) / my;
   const impedance = ETA0 * Math.sqrt(job.sheet.background.muRelative / job.sheet.background.epsilonRelative);
   const physical = job.section === 'E out of plane' ? drive.amplitude : drive.amplitude / impedance;
-  const perCell = pace / (dxMetres * dyMetres);
   return {
     mx,
     my,
@@ -244,9 +243,9 @@ export function makeIncidentLine(
     fed,
     a,
     b,
-    bu: Math.fround(perCell / back.uM),
-    bvx: Math.fround((perCell * dxMetres) / (back.vM * dyMetres)),
-    bvy: Math.fround((perCell * dyMetres) / (back.vM * dxMetres)),
+    bu: Math.fround((pace * pace) / (back.uM * dxMetres * dyMetres)),
+    bvx: Math.fround(dxMetres / (back.vM * dyMetres)),
+    bvy: Math.fround(dyMetres / (back.vM * dxMetres)),
     amplitude: physical * uScale,
     delaySeconds: (stepMetres * index) / C0,
     angleRadians,
