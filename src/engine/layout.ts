@@ -26,8 +26,8 @@ export const PAD_COLUMNS = 4;
 export const SPAN_KIND = 0;
 export const SPAN_COLUMN = 1; // first column, a multiple of 4
 export const SPAN_COUNT = 2; // columns, a multiple of 4
-export const SPAN_COEFFICIENTS = 3; // offset of bu, bvx, bvy (and au, avx, avy) arrays of SPAN_COUNT floats each
-export const SPAN_BU = 4; // float32 scalars of a plain span
+export const SPAN_COEFFICIENTS = 3; // offset of the arrays the kind calls for, in the order named there, SPAN_COUNT floats each
+export const SPAN_BU = 4; // float32 scalars where the kind has no array
 export const SPAN_BVX = 5;
 export const SPAN_BVY = 6;
 export const SPAN_ABSORB_X = 7; // offset of b, c for u and b, c for vy: arrays of SPAN_COUNT floats; 0 when not in the strip
@@ -42,11 +42,15 @@ export const SPAN_U_POINTS = 15;
 export const SPAN_V_POINTS = 16;
 export const SPAN_WORDS = 18;
 
-// Kinds of span. Worked spans do u and v in turn, with the terms of absorbers and drives between.
-export const PLAIN = 0; // scalar coefficients, no loss
-export const LOSSLESS = 1; // bu, bvx, bvy a cell
-export const LOSSY = 2; // au, avx, avy as well
-export const WORKED = 4; // flag on LOSSLESS or LOSSY
+// Kinds of span: which coefficients are given a cell. Loads are scarce, so what is even along a span is a scalar.
+export const PLAIN = 0; // none: scalars, no loss
+export const NODES = 1; // bu
+export const LINKS = 2; // bvx, bvy
+export const LOSSLESS = 3; // bu, bvx, bvy
+export const LOSSY = 4; // bu, bvx, bvy, au, avx, avy
+export const KIND_MASK = 7;
+// Flag on LOSSLESS or LOSSY: worked spans do u and v in turn, with the terms of absorbers and drives between.
+export const WORKED = 8;
 
 // Wrap record: repeating left and right edges share one link, updated after the row.
 export const WRAP_FIRST = 0; // column of the first u, or 0 when the row does not wrap

@@ -166,21 +166,33 @@ function makeSpans(image: ImageWriter, row: CoefficientRow, groups: number, work
     const name = classes[g]!;
     const from = 4 * g;
     const to = 4 * end;
-    if (name.startsWith('plain')) {
-      spans.push({ kind: L.PLAIN, group: g, groups: end - g, coefficients: 0, scalars: [bu[from]!, bvx[from]!, bvy[from]!] });
-    } else {
-      const lossy = name.includes('lossy');
-      const count = to - from;
-      const at = image.take(4 * count * (lossy ? 6 : 3));
-      (lossy ? [bu, bvx, bvy, au, avx, avy] : [bu, bvx, bvy]).forEach((values, k) =>
-        image.singles(at + 4 * count * k, values.subarray(from, to)),
-      );
-      const kind = (lossy ? L.LOSSY : L.LOSSLESS) | (name.startsWith('worked') ? L.WORKED : 0);
-      spans.push({ kind, group: g, groups: end - g, coefficients: at, scalars: [0, 0, 0] });
-    }
+    const cut = (values: Float32Array): Float32Array => values.subarray(from, to);
+    const scalars = [bu[from]!, bvx[from]!, bvy[from]!] as const;
+    const kind = kindOf(name, cut(bu), cut(bvx), cut(bvy));
+    const arrays = ARRAYS[kind & L.KIND_MASK]!.map((which) => cut([bu, bvx, bvy, au, avx, avy][which]!));
+    const at = image.take(4 * (to - from) * arrays.length);
+    arrays.forEach((values, k) => image.singles(at + 4 * (to - from) * k, values));
+    spans.push({ kind, group: g, groups: end - g, coefficients: at, scalars });
     g = end;
   }
   return spans;
+}
+
+/** Arrays of each kind, as places in [bu, bvx, bvy, au, avx, avy]. */
+const ARRAYS: Readonly<Record<number, readonly number[]>> = {
+  [L.PLAIN]: [],
+  [L.NODES]: [0],
+  [L.LINKS]: [1, 2],
+  [L.LOSSLESS]: [0, 1, 2],
+  [L.LOSSY]: [0, 1, 2, 3, 4, 5],
+};
+
+function kindOf(name: string, bu: Float32Array, bvx: Float32Array, bvy: Float32Array): number {
+  if (name.startsWith('plain')) return L.PLAIN;
+  if (name.startsWith('worked')) return L.WORKED | (name.includes('lossy') ? L.LOSSY : L.LOSSLESS);
+  if (name === 'lossy') return L.LOSSY;
+  const even = (values: Float32Array): boolean => values.every((value) => value === values[0]);
+  return even(bvx) && even(bvy) ? L.NODES : even(bu) ? L.LINKS : L.LOSSLESS;
 }
 
 /** A short plain run between array runs costs more to enter than its arrays. */

@@ -84,21 +84,23 @@ function passSpan(views: Views, span: number, u0: number, vx0: number, vy0: numb
   const first = i32[span + L.SPAN_COLUMN]!;
   const count = i32[span + L.SPAN_COUNT]!;
   const c = i32[span + L.SPAN_COEFFICIENTS]! >> 2;
-  const plain = kind === L.PLAIN;
-  const lossy = (kind & 3) === L.LOSSY;
+  const lossy = (kind & L.KIND_MASK) === L.LOSSY;
+  const evenU = kind === L.PLAIN || kind === L.LINKS;
+  const evenV = kind === L.PLAIN || kind === L.NODES;
+  const links = kind === L.LINKS ? c : c + count;
   const u = u0 + first;
   const vx = vx0 + first;
   const vy = vy0 + first;
   for (let k = 0; k < count; k++) {
-    const b = plain ? f32[span + L.SPAN_BU]! : f32[c + k]!;
+    const b = evenU ? f32[span + L.SPAN_BU]! : f32[c + k]!;
     const a = lossy ? f32[c + 3 * count + k]! : 1;
     const curl = f(f(f32[vy + k + 1]! - f32[vy + k]!) - f(f32[vx + k + stride]! - f32[vx + k]!));
     f32[u + k] = f(f(a * f32[u + k]!) + f(b * curl));
   }
   if ((kind & L.WORKED) !== 0) uTerms(views, span, u0, vx0, vy0, stride, step);
   for (let k = 0; k < count; k++) {
-    const bx = plain ? f32[span + L.SPAN_BVX]! : f32[c + count + k]!;
-    const by = plain ? f32[span + L.SPAN_BVY]! : f32[c + 2 * count + k]!;
+    const bx = evenV ? f32[span + L.SPAN_BVX]! : f32[links + k]!;
+    const by = evenV ? f32[span + L.SPAN_BVY]! : f32[links + count + k]!;
     const ax = lossy ? f32[c + 4 * count + k]! : 1;
     const ay = lossy ? f32[c + 5 * count + k]! : 1;
     f32[vx + k] = f(f(ax * f32[vx + k]!) - f(bx * f(f32[u + k]! - f32[u + k - stride]!)));

@@ -1,8 +1,8 @@
 // The WebAssembly kernel against its TypeScript twin: equal bits over the whole image, whatever the row holds.
 import { readFileSync } from 'node:fs';
 import { beforeAll, expect, test } from 'vitest';
-import { H_BLOCK } from '../../src/engine/layout.ts';
-import { makePlan } from '../../src/engine/plan.ts';
+import * as L from '../../src/engine/layout.ts';
+import { makePlan, type RunPlan } from '../../src/engine/plan.ts';
 import { advanceImage } from '../../src/engine/stepper.ts';
 import type { ResolvedJob, Section } from '../../src/model/job.ts';
 import { openRun } from '../../workers/run.ts';
@@ -24,7 +24,7 @@ const STEPS = 60;
 async function differences(job: ResolvedJob, block: number): Promise<{ differ: number; live: number }> {
   const plan = makePlan(job, 'main');
   if (!plan.ok) throw new Error(plan.errors[0].message);
-  plan.value.header[H_BLOCK] = block;
+  plan.value.header[L.H_BLOCK] = block;
   const opened = await openRun(plan.value, kernel);
   if (!opened.ok) throw new Error(opened.errors[0].message);
   const run = opened.value;
@@ -60,9 +60,15 @@ const disc = part(
   { ...AIR, epsilonRelative: 4, muRelative: 1.5, sigma: 0.05, sigmaMagnetic: 20 },
   regularPolygon([0.2, 0.1], 0.04, 60),
 );
+const glass = part('glass', { ...AIR, epsilonRelative: 4 }, regularPolygon([0.2, 0.1], 0.04, 60));
+const oblong = { ...resolvedJob().grid, cells: { xMetres: 0.004, yMetres: 0.005 } };
 const wall = part('wall', METAL, rectangle(0.05, 0, 0.055, 0.08));
 const cases: Record<string, Partial<ResolvedJob>> = {
   'an open sheet': {},
+  'an open sheet of oblong cells': { grid: oblong },
+  'lossless dielectric': { parts: [glass] },
+  'lossless dielectric on oblong cells': { parts: [glass], grid: oblong },
+  'a metal disc': { parts: [part('disc', METAL, regularPolygon([0.2, 0.1], 0.04, 60))] },
   'lossy dielectric and metal': { parts: [disc, wall] },
   'parts that run into the absorber': {
     parts: [part('block', { ...AIR, epsilonRelative: 3, sigma: 0.01 }, rectangle(0.1, -0.1, 0.4, 0.05))],
@@ -85,3 +91,35 @@ for (const section of ['E out of plane', 'H out of plane'] satisfies Section[]) 
     }
   }
 }
+
+/** Kinds of span in a plan, with the flag of worked ones; plain ones also by whether their links have b = 1. */
+function kindsOf({ header, fixed, fixedOffset }: RunPlan): string[] {
+  const words = new Int32Array(fixed);
+  const singles = new Float32Array(fixed);
+  const wordAt = (offset: number): number => (offset - fixedOffset) >> 2;
+  const table = wordAt(header[L.H_ROW_TABLE]!);
+  const kinds: string[] = [];
+  for (let row = 1; row <= header[L.H_ROWS]!; row++) {
+    const program = wordAt(words[table + row]!);
+    for (let n = 0; n < words[program]!; n++) {
+      const span = program + 1 + n * L.SPAN_WORDS;
+      const unit = singles[span + L.SPAN_BVX] === 1 && singles[span + L.SPAN_BVY] === 1;
+      const kind = words[span + L.SPAN_KIND]!;
+      kinds.push(`${kind}${kind === L.PLAIN || kind === L.NODES ? ` ${unit}` : ''}`);
+    }
+  }
+  return kinds;
+}
+
+test('the cases hold every kind of span', () => {
+  const found = new Set<string>();
+  for (const section of ['E out of plane', 'H out of plane'] satisfies Section[]) {
+    for (const change of Object.values(cases)) {
+      const plan = makePlan(resolvedJob({ section, ...change }), 'main');
+      if (plan.ok) for (const kind of kindsOf(plan.value)) found.add(kind);
+    }
+  }
+  const scalarLinks = [L.PLAIN, L.NODES].flatMap((kind) => [`${kind} false`, `${kind} true`]);
+  const worked = [L.LOSSLESS, L.LOSSY].map((kind) => String(kind | L.WORKED));
+  expect([...found].sort()).toEqual([...scalarLinks, ...[L.LINKS, L.LOSSLESS, L.LOSSY].map(String), ...worked].sort());
+});

@@ -32,9 +32,12 @@ import {
   LINE_U,
   LINE_VX,
   LINE_VY,
+  KIND_MASK,
   LINE_WORDS,
+  LINKS,
   LOSSLESS,
   LOSSY,
+  NODES,
   PLAIN,
   POINT_COLUMN,
   POINT_FIELD,
@@ -160,6 +163,42 @@ function unitSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, bu: 
     u += 16;
     vx += 16;
     vy += 16;
+  }
+}
+
+function nodesSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize, bvx: v128, bvy: v128): void {
+  let left = v128.load(u - 16);
+  const end = u + bytes;
+  while (u < end) {
+    left = plainFour(u, vx, vy, row, v128.load(c), bvx, bvy, left);
+    u += 16;
+    vx += 16;
+    vy += 16;
+    c += 16;
+  }
+}
+
+function unitNodesSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize): void {
+  let left = v128.load(u - 16);
+  const end = u + bytes;
+  while (u < end) {
+    left = unitFour(u, vx, vy, row, v128.load(c), left);
+    u += 16;
+    vx += 16;
+    vy += 16;
+    c += 16;
+  }
+}
+
+function linksSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, bu: v128, c: usize): void {
+  let left = v128.load(u - 16);
+  const end = u + bytes;
+  while (u < end) {
+    left = plainFour(u, vx, vy, row, bu, v128.load(c), v128.load(c + bytes), left);
+    u += 16;
+    vx += 16;
+    vy += 16;
+    c += 16;
   }
 }
 
@@ -289,7 +328,7 @@ function workedSpan(span: usize, base: usize, u0: usize, vx0: usize, vy0: usize,
   const first = <usize>word(span, SPAN_COLUMN) << 2;
   const bytes = <usize>word(span, SPAN_COUNT) << 2;
   const c = base + offset(span, SPAN_COEFFICIENTS);
-  const lossy = (word(span, SPAN_KIND) & 3) == LOSSY;
+  const lossy = (word(span, SPAN_KIND) & KIND_MASK) == LOSSY;
   const u = u0 + first;
   const vx = vx0 + first;
   const vy = vy0 + first;
@@ -379,26 +418,37 @@ function workedSpan(span: usize, base: usize, u0: usize, vx0: usize, vy0: usize,
   points(pointsAt + <usize>uPoints * (<usize>POINT_WORDS << 2), vPoints, base, u0, vx0, vy0, step, level);
 }
 
+// A span without absorber or drive. u, vx, vy point at column 0 of the row.
+// @ts-ignore: decorator
+@inline function passSpan(kind: i32, span: usize, base: usize, u0: usize, vx0: usize, vy0: usize, row: usize): void {
+  const first = <usize>word(span, SPAN_COLUMN) << 2;
+  const bytes = <usize>word(span, SPAN_COUNT) << 2;
+  const c = base + offset(span, SPAN_COEFFICIENTS);
+  const u = u0 + first;
+  const vx = vx0 + first;
+  const vy = vy0 + first;
+  const bu = splat(span, SPAN_BU);
+  const bvx = splat(span, SPAN_BVX);
+  const bvy = splat(span, SPAN_BVY);
+  const unit = single(span, SPAN_BVX) == 1 && single(span, SPAN_BVY) == 1;
+  if (kind == PLAIN) {
+    if (unit) unitSpan(u, vx, vy, row, bytes, bu);
+    else plainSpan(u, vx, vy, row, bytes, bu, bvx, bvy);
+  } else if (kind == NODES) {
+    if (unit) unitNodesSpan(u, vx, vy, row, bytes, c);
+    else nodesSpan(u, vx, vy, row, bytes, c, bvx, bvy);
+  } else if (kind == LINKS) linksSpan(u, vx, vy, row, bytes, bu, c);
+  else if (kind == LOSSLESS) losslessSpan(u, vx, vy, row, bytes, c);
+  else lossySpan(u, vx, vy, row, bytes, c);
+}
+
 // u, vx, vy point at column 0 of the row.
 function passRow(program: usize, base: usize, u: usize, vx: usize, vy: usize, row: usize, record: usize, step: i32, level: i32): void {
   let at = program + 4;
   for (let n = load<i32>(program); n > 0; n--) {
     const kind = word(at, SPAN_KIND);
-    const first = <usize>word(at, SPAN_COLUMN) << 2;
-    const bytes = <usize>word(at, SPAN_COUNT) << 2;
-    if (kind == PLAIN) {
-      if (single(at, SPAN_BVX) == 1 && single(at, SPAN_BVY) == 1) {
-        unitSpan(u + first, vx + first, vy + first, row, bytes, splat(at, SPAN_BU));
-      } else {
-        plainSpan(u + first, vx + first, vy + first, row, bytes, splat(at, SPAN_BU), splat(at, SPAN_BVX), splat(at, SPAN_BVY));
-      }
-    } else if (kind & WORKED) {
-      workedSpan(at, base, u, vx, vy, row, step, level);
-    } else if (kind == LOSSLESS) {
-      losslessSpan(u + first, vx + first, vy + first, row, bytes, base + offset(at, SPAN_COEFFICIENTS));
-    } else {
-      lossySpan(u + first, vx + first, vy + first, row, bytes, base + offset(at, SPAN_COEFFICIENTS));
-    }
+    if (kind & WORKED) workedSpan(at, base, u, vx, vy, row, step, level);
+    else passSpan(kind, at, base, u, vx, vy, row);
     at += <usize>SPAN_WORDS << 2;
   }
   const firstColumn = <usize>word(at, WRAP_FIRST) << 2;
@@ -536,25 +586,21 @@ export function energy(base: usize): f64 {
     for (let n = load<i32>(program); n > 0; n--) {
       const first = (<usize>word(at, SPAN_COLUMN) << 2) + <usize>j * row;
       const bytes = <usize>word(at, SPAN_COUNT) << 2;
-      if (word(at, SPAN_KIND) == PLAIN) {
-        const bu = <f64>single(at, SPAN_BU);
-        const bvx = <f64>single(at, SPAN_BVX);
-        const bvy = <f64>single(at, SPAN_BVY);
-        for (let k = first; k < first + bytes; k += 4) sum += cellEnergy(u0 + k, vx0 + k, vy0 + k, row, bu, bvx, bvy);
-      } else {
-        const c = base + offset(at, SPAN_COEFFICIENTS);
-        for (let k: usize = 0; k < bytes; k += 4) {
-          const p = first + k;
-          sum += cellEnergy(
-            u0 + p,
-            vx0 + p,
-            vy0 + p,
-            row,
-            <f64>load<f32>(c + k),
-            <f64>load<f32>(c + bytes + k),
-            <f64>load<f32>(c + 2 * bytes + k),
-          );
-        }
+      const kind = word(at, SPAN_KIND);
+      const c = base + offset(at, SPAN_COEFFICIENTS);
+      // A scalar is an array that the index never enters.
+      const evenU = kind == PLAIN || kind == LINKS;
+      const evenV = kind == PLAIN || kind == NODES;
+      const links = kind == LINKS ? c : c + bytes;
+      const bu = evenU ? at + (<usize>SPAN_BU << 2) : c;
+      const bvx = evenV ? at + (<usize>SPAN_BVX << 2) : links;
+      const bvy = evenV ? at + (<usize>SPAN_BVY << 2) : links + bytes;
+      for (let k: usize = 0; k < bytes; k += 4) {
+        const p = first + k;
+        const b = <f64>load<f32>(evenU ? bu : bu + k);
+        const x = <f64>load<f32>(evenV ? bvx : bvx + k);
+        const y = <f64>load<f32>(evenV ? bvy : bvy + k);
+        sum += cellEnergy(u0 + p, vx0 + p, vy0 + p, row, b, x, y);
       }
       at += <usize>SPAN_WORDS << 2;
     }
