@@ -37,11 +37,11 @@ function appConfig(): UserConfig {
   };
 }
 
-/** The command line as one file, with every dependency inside and the kernel beside it: it runs without node_modules. */
+/** The command line as one file, with every dependency inside and the kernels beside it: it runs without node_modules. */
 function cliConfig(): UserConfig {
   return {
     publicDir: false,
-    plugins: [kernelBeside('dist/cli')],
+    plugins: [runtimeFilesBeside('dist/cli')],
     ssr: { noExternal: true },
     build: {
       ssr: 'src/cli/guidewall.ts',
@@ -76,10 +76,11 @@ function contentSecurityPolicy(): Plugin {
   };
 }
 
-/** `new URL('./kernel/kernel.wasm', import.meta.url)` stays as written in a build for Node; this puts the file where it points. */
-function kernelBeside(directory: string): Plugin {
+/** `new URL('./kernel/kernel.wasm', import.meta.url)` and the like stay as written in a build for Node; this puts the files there. */
+function runtimeFilesBeside(directory: string): Plugin {
+  const files = ['kernel/kernel.wasm', 'kernel/kernel-shared.wasm', 'helper.node.mjs', 'kernel-imports.mjs'];
   return {
-    name: 'kernel-beside',
-    closeBundle: () => cpSync('workers/kernel/kernel.wasm', `${directory}/kernel/kernel.wasm`),
+    name: 'runtime-files-beside',
+    closeBundle: () => files.forEach((file) => cpSync(`workers/${file}`, `${directory}/${file}`)),
   };
 }

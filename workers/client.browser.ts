@@ -9,10 +9,10 @@ export interface SpawnedSession {
   close(): void;
 }
 
-const METHODS = ['open', 'start', 'hold', 'stepOnce', 'rewind', 'stop', 'setPace', 'poll', 'record'] as const;
+const METHODS = ['prepare', 'open', 'start', 'hold', 'stepOnce', 'rewind', 'stop', 'setPace', 'poll', 'record'] as const;
 
-/** Starts a worker. Comlink promises hang for ever when a worker dies, so each call races with its death. */
-export function spawnSession(): SpawnedSession {
+/** Starts a worker whose runs may take up to `threads` threads. Comlink promises hang for ever when a worker dies, so each call races with its death. */
+export function spawnSession(threads: number): SpawnedSession {
   const worker = new Worker(new URL('./session.worker.ts', import.meta.url), { type: 'module' });
   const remote: Remote<SessionApi> = wrap<SessionApi>(worker);
   let die: (reason: Error) => void = () => undefined;
@@ -29,8 +29,10 @@ export function spawnSession(): SpawnedSession {
       (...args: unknown[]) => Promise.race([(remote[name] as unknown as (...a: unknown[]) => Promise<unknown>)(...args), death]),
     ]),
   );
+  const api = guarded as unknown as SessionApi;
+  api.prepare(threads).catch(() => undefined); // the call that needs it will tell
   return {
-    api: guarded as unknown as SessionApi,
+    api,
     close() {
       worker.terminate();
       die(new Error('The run was closed.'));

@@ -35,6 +35,8 @@ export interface RunProgress {
   readonly energyDb: number;
   /** Million cell updates a second over the last stretch. */
   readonly megaCellsPerSecond: number;
+  /** Threads that work on it by now. */
+  readonly threads: number;
   readonly secondsLeft: number;
   readonly stopReason: StopReason | null;
   /** Set when stopReason is 'not finite' or 'growing': step, place and likely cause in words. */
@@ -67,6 +69,8 @@ export interface RunRecord {
   readonly trouble: string | null;
   readonly energyDb: number;
   readonly wallSeconds: number;
+  /** Threads that worked on it at the end; the numbers do not depend on it. */
+  readonly threads: number;
   readonly megaCellsPerSecond: number;
   readonly estimate: Estimate;
   /** The even band and the listed frequencies, merged, rising, without repeats. */
@@ -81,7 +85,7 @@ export interface SessionReport {
   readonly progress: RunProgress;
   /** Present when asked for. */
   readonly frame: FieldFrame | null;
-  /** Samples since `sinceStep`, one entry per probe. */
+  /** Samples since `sinceStep`, one entry per probe; none when that is Infinity. */
   readonly traces: readonly ProbeTrace[];
   readonly sinceStep: number;
 }
@@ -91,7 +95,10 @@ export interface SessionReport {
  * `poll` is how everything streams out: the caller sets the pace, so a slow page never slows the run.
  */
 export interface SessionApi {
-  open(job: Job, role: RunRole): Promise<Result<Estimate>>;
+  /** Loads and starts at once what runs on up to so many threads will want, so that nothing has to be fetched later. */
+  prepare(threads: number): Promise<void>;
+  /** `threads` is how many may work on the run, 1 when left out; where memory cannot be shared it is one. */
+  open(job: Job, role: RunRole, threads?: number): Promise<Result<Estimate>>;
   start(): Promise<void>;
   hold(): Promise<void>;
   /** One time step while held or ready. */

@@ -6,18 +6,25 @@ import type { RunProgress, RunRecord, RunRole, SessionApi } from './protocol.ts'
 
 const POLL_MILLISECONDS = 25;
 
-/** Opens, runs and reads a job. `onProgress` is called about 40 times a second; returning false stops the run. */
+export interface RunWishes {
+  /** Called about 40 times a second; returning false stops the run. */
+  onProgress?(progress: RunProgress): boolean | void;
+  /** How many threads may work on the run; 1 when left out. */
+  readonly threads?: number;
+}
+
+/** Opens, runs and reads a job. */
 export async function runToEnd(
   session: SessionApi,
   job: Job,
   role: RunRole,
-  onProgress?: (progress: RunProgress) => boolean | void,
+  { onProgress, threads = 1 }: RunWishes = {},
 ): Promise<Result<RunRecord>> {
-  const opened = await session.open(job, role);
+  const opened = await session.open(job, role, threads);
   if (!opened.ok) return opened;
   await session.start();
   for (;;) {
-    const { progress } = await session.poll({ view: null, maxWidth: 0, maxHeight: 0, sinceStep: Number.MAX_SAFE_INTEGER });
+    const { progress } = await session.poll({ view: null, maxWidth: 0, maxHeight: 0, sinceStep: Infinity });
     const goOn = onProgress?.(progress) !== false;
     if (progress.state === 'done') break;
     if (!goOn) await session.stop();

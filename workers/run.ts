@@ -2,25 +2,34 @@
 // Must not know workers, messages, clocks or pages.
 import type { Result } from '../src/base/result.ts';
 import { fail, ok } from '../src/base/result.ts';
+import { SYNC_READY } from '../src/engine/layout.ts';
 import { feedInto } from '../src/engine/plane-wave.ts';
 import type { RunPlan } from '../src/engine/plan.ts';
 import { RunningDft } from '../src/engine/spectrum.ts';
 import { waveformAt } from '../src/engine/waveform.ts';
+import { kernelImports } from './kernel-imports.mjs';
+import type { ThreadPool } from './thread-pool.ts';
 
 interface KernelExports {
   advance(base: number, steps: number): void;
   energy(base: number): number;
+  dismiss(): void;
 }
 
 const PAGE = 65536;
 /** The image begins one page in: the kernel keeps its own few words below. */
 const BASE = PAGE;
 
-/** A run at t = 0. Fails when the memory cannot be had. */
-export async function openRun(plan: RunPlan, kernel: WebAssembly.Module): Promise<Result<Run>> {
+/**
+ * A run at t = 0. With a pool and a plan for several threads its memory is shared, and `kernel` must be the build for that.
+ * Fails when the memory cannot be had.
+ */
+export async function openRun(plan: RunPlan, kernel: WebAssembly.Module, pool: ThreadPool | null = null): Promise<Result<Run>> {
+  const shared = pool !== null && plan.threads > 1;
+  const pages = 1 + Math.ceil(plan.imageBytes / PAGE);
   let memory: WebAssembly.Memory;
   try {
-    memory = new WebAssembly.Memory({ initial: 1 + Math.ceil(plan.imageBytes / PAGE) });
+    memory = new WebAssembly.Memory(shared ? { initial: pages, maximum: pages, shared } : { initial: pages });
   } catch {
     return fail({
       code: 'no memory',
@@ -29,24 +38,25 @@ export async function openRun(plan: RunPlan, kernel: WebAssembly.Module): Promis
       hint: 'Close other pages, or take larger cells.',
     });
   }
-  const instance = await WebAssembly.instantiate(kernel, { env: { memory } });
+  const instance = await WebAssembly.instantiate(kernel, { env: kernelImports(memory) });
+  if (shared) pool.serve({ kernel, memory, base: BASE }, plan.threads - 1);
   return ok(new Run(plan, memory.buffer, instance.exports as unknown as KernelExports));
 }
 
 export class Run {
   readonly plan: RunPlan;
   /** The whole image as float32, offset 0 being its start. */
-  readonly image: Float32Array<ArrayBuffer>;
+  readonly image: Float32Array;
   /** Steps done. u stands at step * dt, in-plane fields half a step later. */
   step = 0;
   /** Samples per channel, index n at time n * dt; in-plane channels aligned to u by the mean of the half steps round it. */
   private traces: Float32Array<ArrayBuffer>[];
   private readonly kernel: KernelExports;
-  private readonly buffer: ArrayBuffer;
+  private readonly buffer: ArrayBufferLike;
   private dft: RunningDft;
   private driveDft: RunningDft;
 
-  constructor(plan: RunPlan, buffer: ArrayBuffer, kernel: KernelExports) {
+  constructor(plan: RunPlan, buffer: ArrayBufferLike, kernel: KernelExports) {
     this.plan = plan;
     this.kernel = kernel;
     this.buffer = buffer;
@@ -86,6 +96,16 @@ export class Run {
     this.kernel.advance(BASE, steps);
     this.record(steps);
     this.step += steps;
+  }
+
+  /** Threads that work on the run by now. */
+  get threads(): number {
+    return Math.min(this.plan.threads, 1 + new Int32Array(this.buffer, SYNC_READY, 1)[0]!);
+  }
+
+  /** Sends helper threads home; the run is not to be advanced after that. */
+  close(): void {
+    this.kernel.dismiss();
   }
 
   /** Discrete energy in kernel units; only ratios mean anything. */

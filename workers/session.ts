@@ -2,6 +2,7 @@
 // Must not know whether it lives in a Web Worker or in this process; the host gives kernel, clock and turn-taking.
 import { fail, ok, type Result } from '../src/base/result.ts';
 import type { Estimate } from '../src/engine/estimate.ts';
+import { BLOCK_STEPS } from '../src/engine/feasible.ts';
 import { sampleField, type FrameQuantity } from '../src/engine/frame.ts';
 import { makePlan } from '../src/engine/plan.ts';
 import type { Job } from '../src/model/job.ts';
@@ -18,10 +19,13 @@ import type {
   StopReason,
 } from './protocol.ts';
 import { openRun, type Run } from './run.ts';
+import type { ThreadPool } from './thread-pool.ts';
 
 export interface SessionHost {
-  /** The compiled kernel; asked for once. */
-  loadKernel(): Promise<WebAssembly.Module>;
+  /** The compiled kernel, or its build for shared memory; each asked for once. */
+  loadKernel(shared: boolean): Promise<WebAssembly.Module>;
+  /** Helper threads, or null where memory cannot be shared. */
+  readonly pool: ThreadPool | null;
   /** Lets waiting messages in; resolves after at least `milliseconds`. */
   yieldTurn(milliseconds: number): Promise<void>;
   /** Milliseconds from any start. */
@@ -40,7 +44,8 @@ const RUNAWAY_DB = -30;
 export function makeSession(host: SessionHost): SessionApi {
   const session = new Session(host);
   return {
-    open: (job, role) => session.open(job, role),
+    prepare: (threads) => session.prepare(threads),
+    open: (job, role, threads) => session.open(job, role, threads),
     start: () => session.start(),
     hold: () => session.hold(),
     stepOnce: () => session.stepOnce(),
@@ -54,7 +59,7 @@ export function makeSession(host: SessionHost): SessionApi {
 
 class Session implements SessionApi {
   private readonly host: SessionHost;
-  private kernel: Promise<WebAssembly.Module> | null = null;
+  private readonly kernels = new Map<boolean, Promise<WebAssembly.Module>>();
   private run: Run | null = null;
   private role: RunRole = 'main';
   private state: RunProgress['state'] = 'ready';
@@ -74,15 +79,22 @@ class Session implements SessionApi {
     this.host = host;
   }
 
-  async open(job: Job, role: RunRole): Promise<Result<Estimate>> {
+  async prepare(threads: number): Promise<void> {
+    await this.kernelFor(false);
+    if (this.host.pool === null || threads < 2) return;
+    this.host.pool.prepare(threads - 1);
+    await this.kernelFor(true);
+  }
+
+  async open(job: Job, role: RunRole, threads = 1): Promise<Result<Estimate>> {
     this.generation++;
+    this.run?.close();
     this.run = null;
     const resolved = resolveJob(job);
     if (!resolved.ok) return resolved;
-    const plan = makePlan(resolved.value, role);
+    const plan = makePlan(resolved.value, role, this.host.pool === null ? 1 : threads);
     if (!plan.ok) return plan;
-    this.kernel ??= this.host.loadKernel();
-    const run = await openRun(plan.value, await this.kernel);
+    const run = await openRun(plan.value, await this.kernelFor(plan.value.threads > 1), this.host.pool);
     if (!run.ok) return run;
     this.run = run.value;
     this.role = role;
@@ -128,8 +140,9 @@ class Session implements SessionApi {
   async poll(request: Parameters<SessionApi['poll']>[0]): Promise<SessionReport> {
     const { run } = this;
     if (run === null) return { progress: this.progress(), frame: null, traces: [], sinceStep: request.sinceStep };
-    // A rewound run has fewer samples than the caller holds: it starts again from none.
-    const sinceStep = request.sinceStep > run.step + 1 ? 0 : Math.max(0, request.sinceStep);
+    // A rewound run has fewer samples than the caller holds: it starts again from none. Infinity asks for no samples.
+    const { sinceStep: since } = request;
+    const sinceStep = Number.isFinite(since) && since > run.step + 1 ? 0 : Math.max(0, since);
     return {
       progress: this.progress(),
       frame: request.view === null ? null : makeFrame(run, request.view, request.maxWidth, request.maxHeight),
@@ -152,6 +165,7 @@ class Session implements SessionApi {
       trouble: this.trouble,
       energyDb: this.energyDb,
       wallSeconds: this.busyMilliseconds / 1000,
+      threads: run.threads,
       megaCellsPerSecond: this.meanSpeed(run),
       estimate: plan.estimate,
       frequenciesHertz: plan.frequenciesHertz,
@@ -162,6 +176,14 @@ class Session implements SessionApi {
       })),
       driveSpectrum: run.driveSpectrum(),
     });
+  }
+
+  private kernelFor(shared: boolean): Promise<WebAssembly.Module> {
+    const known = this.kernels.get(shared);
+    if (known !== undefined) return known;
+    const kernel = this.host.loadKernel(shared);
+    this.kernels.set(shared, kernel);
+    return kernel;
   }
 
   private reset(): void {
@@ -208,7 +230,7 @@ class Session implements SessionApi {
       if (elapsed > 0 && steps > 0) {
         const now = (steps * run.plan.estimate.cellsTotal) / (elapsed * 1000);
         this.speed = this.speed === 0 ? now : 0.8 * this.speed + 0.2 * now;
-        chunk = Math.max(1, Math.min(run.plan.slice, Math.round((steps * SLICE_MILLISECONDS) / Math.max(elapsed, 0.5) / 2)));
+        chunk = chunkOf(run, (steps * SLICE_MILLISECONDS) / Math.max(elapsed, 0.5) / 2);
       }
       await this.host.yieldTurn(paced && steps <= 1 ? Math.min(50, 1000 / this.pace) : 0);
     }
@@ -260,11 +282,19 @@ class Session implements SessionApi {
       timeSeconds: step * (run?.plan.dtSeconds ?? 0),
       energyDb: this.energyDb,
       megaCellsPerSecond: this.speed,
+      threads: run?.threads ?? 1,
       secondsLeft: perSecond > 0 && this.state !== 'done' ? (stepLimit - step) / Math.min(perSecond, this.pace) : 0,
       stopReason: this.stopReason,
       trouble: this.trouble,
     };
   }
+}
+
+/** About `steps`, in whole blocks for every thread where that is not far off: a row is cheaper the more steps pass it at once. */
+function chunkOf(run: Run, steps: number): number {
+  const whole = BLOCK_STEPS * run.threads;
+  const chunk = steps < whole / 4 ? Math.max(1, Math.round(steps)) : whole * Math.max(1, Math.round(steps / whole));
+  return Math.min(run.plan.slice, chunk);
 }
 
 function describeTrouble(run: Run): string {

@@ -17,7 +17,7 @@ import { useJobStore } from './job-store.ts';
 import { tell, tellTrouble } from './notice-store.ts';
 import type { Samples } from './read-samples.ts';
 import { readSamples } from './read-samples.ts';
-import { runActions } from './run-controller.ts';
+import { runActions } from './run-actions.ts';
 import { useRunStore } from './run-store.ts';
 import { exportSheet } from './sheet-exporter.ts';
 

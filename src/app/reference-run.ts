@@ -22,13 +22,20 @@ export class ReferenceRun {
   private turn = 0;
   private readonly remembered = new Map<string, RunRecord>();
   private readonly seat: SolverSeat;
+  private readonly threads: () => number;
   private readonly wait: (milliseconds: number) => Promise<void>;
   private readonly onChange: () => void;
 
-  constructor(seat: SolverSeat, wait: (milliseconds: number) => Promise<void>, onChange: () => void) {
+  constructor(seat: SolverSeat, threads: () => number, wait: (milliseconds: number) => Promise<void>, onChange: () => void) {
     this.seat = seat;
+    this.threads = threads;
     this.wait = wait;
     this.onChange = onChange;
+  }
+
+  /** Whether `follow` would have to run something for this job. */
+  isNeeded(job: Job, resolved: ResolvedJob, estimate: Estimate): boolean {
+    return wantsReference(job) && !this.remembered.has(makeReferenceKey(resolved, estimate));
   }
 
   /** Nothing to do when `job` has its reference already, or it is under way. */
@@ -90,16 +97,14 @@ export class ReferenceRun {
   private async run(job: Job, turn: number): Promise<Result<RunRecord> | null> {
     try {
       const { api } = this.seat;
-      const opened = await api.open(job, 'reference');
+      const opened = await api.open(job, 'reference', this.threads());
       if (turn !== this.turn) return null;
       if (!opened.ok) return opened;
       await api.start();
-      let step = 0;
       for (;;) {
-        const { progress } = await api.poll({ view: null, maxWidth: 0, maxHeight: 0, sinceStep: step });
+        const { progress } = await api.poll({ view: null, maxWidth: 0, maxHeight: 0, sinceStep: Infinity });
         if (turn !== this.turn) return null;
         if (progress.state === 'done') break;
-        step = progress.step;
         await this.wait(LOOK_MILLISECONDS);
       }
       const record = await api.record();

@@ -1,6 +1,5 @@
 // Owns the run shown: opens the job in a solver, follows it, streams what comes out to the stores and the frame channel.
 // Must not know React components, canvases, or how the solver works.
-import { spawnSession } from '../../workers/client.browser.ts';
 import type { RunProgress } from '../../workers/protocol.ts';
 import type { AppError } from '../base/result.ts';
 import { makeEstimate } from '../engine/estimate.ts';
@@ -12,9 +11,7 @@ import { frameLimits, latestFrame, publishFrame } from './frame-channel.ts';
 import { GrowingTraces } from './growing-traces.ts';
 import { useJobStore } from './job-store.ts';
 import { ReferenceRun } from './reference-run.ts';
-import { keepRun, overlayKept, removeKept, renameKept } from './run-book.ts';
 import { asksTheSame, standsOnSameSheet } from './run-question.ts';
-import type { RunActions } from './run-store.ts';
 import { NO_PROGRESS, useRunStore } from './run-store.ts';
 import type { SpawnedSolver } from './solver-seat.ts';
 import { SolverSeat } from './solver-seat.ts';
@@ -22,12 +19,15 @@ import { useViewStore } from './view-store.ts';
 
 /** What the controller needs of its surroundings. */
 export interface RunSurroundings {
-  spawn(): SpawnedSolver;
+  /** A solver whose runs may take up to `threads` threads. */
+  spawn(threads: number): SpawnedSolver;
   /** The next moment at which something could be drawn. */
   nextFrame(): Promise<void>;
   wait(milliseconds: number): Promise<void>;
   /** Milliseconds from any start. */
   now(): number;
+  /** Threads that may compute at once. */
+  threads(): number;
 }
 
 /** Progress and samples reach the store at most ten times a second. */
@@ -61,9 +61,15 @@ export class RunController {
 
   constructor(around: RunSurroundings) {
     this.around = around;
-    this.seat = new SolverSeat(() => around.spawn());
+    this.seat = new SolverSeat(() => around.spawn(around.threads()));
     const wait = (milliseconds: number): Promise<void> => around.wait(milliseconds);
-    this.reference = new ReferenceRun(new SolverSeat(() => around.spawn()), wait, () => this.publishReference());
+    const seat = new SolverSeat(() => around.spawn(halfOf(around.threads())));
+    this.reference = new ReferenceRun(
+      seat,
+      () => halfOf(around.threads()),
+      wait,
+      () => this.publishReference(),
+    );
   }
 
   /** Follows the job and the view from now on. The answer ends it and gives the solvers up. */
@@ -177,7 +183,15 @@ export class RunController {
     this.runErrors = [];
     this.publishErrors();
     if (!resolved.ok) return null;
-    const opened = await this.seat.api.open(job, 'main');
+    const estimate = makeEstimate(resolved.value, this.speed);
+    if (!estimate.ok) {
+      this.open = null;
+      this.complain(estimate.errors);
+      return null;
+    }
+    const alone = !this.reference.isNeeded(job, resolved.value, estimate.value);
+    const threads = this.around.threads();
+    const opened = await this.seat.api.open(job, 'main', alone ? threads : halfOf(threads));
     if (turn !== this.turn) return null;
     if (!opened.ok) {
       this.open = null;
@@ -186,7 +200,7 @@ export class RunController {
     }
     await this.seat.api.setPace(this.pace);
     if (turn !== this.turn) return null;
-    this.open = { job, resolved: resolved.value, estimate: opened.value };
+    this.open = { job, resolved: resolved.value, estimate: estimate.value };
     this.growing = new GrowingTraces();
     useRunStore.setState({
       progress: { ...NO_PROGRESS, stepLimit: opened.value.stepLimit },
@@ -355,40 +369,7 @@ export class RunController {
   }
 }
 
-const HIDDEN_MILLISECONDS = 250;
-
-/** Hidden pages get no animation frames, yet their runs end too. */
-function nextFrame(): Promise<void> {
-  return new Promise((resolve) => {
-    const frame = requestAnimationFrame(go);
-    const timer = setTimeout(go, HIDDEN_MILLISECONDS);
-    function go(): void {
-      cancelAnimationFrame(frame);
-      clearTimeout(timer);
-      resolve();
-    }
-  });
+/** What each of two runs gets that go side by side. */
+function halfOf(threads: number): number {
+  return Math.max(1, Math.floor(threads / 2));
 }
-
-export const runController = new RunController({
-  spawn: spawnSession,
-  nextFrame,
-  wait: (milliseconds) => new Promise((resolve) => setTimeout(resolve, milliseconds)),
-  now: () => performance.now(),
-});
-
-/** Free of `this`: each may be handed on by itself. */
-export const runActions: RunActions = {
-  run: () => runController.run(),
-  hold: () => runController.hold(),
-  resume: () => runController.resume(),
-  stepOnce: () => runController.stepOnce(),
-  backToStart: () => runController.backToStart(),
-  stop: () => runController.stop(),
-  setPace: (stepsPerSecond) => runController.setPace(stepsPerSecond),
-  keep: keepRun,
-  renameKept,
-  overlayKept,
-  removeKept,
-  reopenKept: (id) => runController.reopenKept(id),
-};

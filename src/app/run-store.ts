@@ -63,6 +63,7 @@ export const NO_PROGRESS: RunProgress = {
   timeSeconds: 0,
   energyDb: 0,
   megaCellsPerSecond: 0,
+  threads: 1,
   secondsLeft: 0,
   stopReason: null,
   trouble: null,

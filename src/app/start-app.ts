@@ -6,7 +6,7 @@ import { exampleShelf } from './examples.ts';
 import { useJobStore } from './job-store.ts';
 import { tellTrouble } from './notice-store.ts';
 import { restore, Saver } from './persistence.ts';
-import { runActions, runController } from './run-controller.ts';
+import { runActions, runController } from './run-actions.ts';
 import { useRunStore } from './run-store.ts';
 import { openLastWords, openShelf } from './shelf.ts';
 import { useViewStore } from './view-store.ts';

@@ -3,13 +3,23 @@
 import { parseArgs } from 'node:util';
 import type { ParseArgsConfig } from 'node:util';
 import { basename, extname } from 'node:path';
+import { MOST_THREADS } from '../engine/layout.ts';
 import { HELP } from './help.ts';
 import type { HelpTopic } from './help.ts';
 
+/** 'all': as many as the machine has cores. */
+export type Threads = number | 'all';
+
 export type Invocation =
-  | { readonly command: 'run'; readonly jobFile: string; readonly directory: string; readonly quiet: boolean }
+  | {
+      readonly command: 'run';
+      readonly jobFile: string;
+      readonly directory: string;
+      readonly quiet: boolean;
+      readonly threads: Threads;
+    }
   | { readonly command: 'check'; readonly jobFile: string }
-  | { readonly command: 'speed'; readonly cells: number; readonly seconds: number }
+  | { readonly command: 'speed'; readonly cells: number; readonly seconds: number; readonly threads: Threads }
   | { readonly command: 'help'; readonly text: string }
   | { readonly command: 'version' }
   | { readonly command: 'misused'; readonly message: string };
@@ -45,14 +55,16 @@ function helpFor(topic: string | undefined): Invocation {
 }
 
 function parseRun(words: readonly string[]): Invocation {
-  const read = readOptions(words, { out: { type: 'string' }, quiet: { type: 'boolean' } });
+  const read = readOptions(words, { out: { type: 'string' }, quiet: { type: 'boolean' }, threads: { type: 'string' } });
   if ('trouble' in read) return misused(read.trouble, 'run');
   const jobFile = onlyFile(read.files);
   if (jobFile === null) return misused(oneJobNotice(read.files), 'run');
   const out = read.values['out'];
   if (out === '') return misused('--out is empty: give the folder the results go to.', 'run');
   const directory = typeof out === 'string' ? out : `${basename(jobFile, extname(jobFile))}-results`;
-  return { command: 'run', jobFile, directory, quiet: read.values['quiet'] === true };
+  const threads = threadsOf(read.values['threads']);
+  if (threads === null) return misused(threadsNotice(read.values['threads']), 'run');
+  return { command: 'run', jobFile, directory, quiet: read.values['quiet'] === true, threads };
 }
 
 function parseCheck(words: readonly string[]): Invocation {
@@ -63,7 +75,7 @@ function parseCheck(words: readonly string[]): Invocation {
 }
 
 function parseSpeed(words: readonly string[]): Invocation {
-  const read = readOptions(words, { cells: { type: 'string' }, seconds: { type: 'string' } });
+  const read = readOptions(words, { cells: { type: 'string' }, seconds: { type: 'string' }, threads: { type: 'string' } });
   if ('trouble' in read) return misused(read.trouble, 'speed');
   if (read.files.length > 0) return misused(`speed takes no file, and "${read.files[0]}" is given.`, 'speed');
   const cells = Number(read.values['cells'] ?? 1024);
@@ -74,7 +86,20 @@ function parseSpeed(words: readonly string[]): Invocation {
   if (!(seconds >= 0.1 && seconds <= 600)) {
     return misused(`--seconds ${String(read.values['seconds'])}: give a number from 0.1 to 600.`, 'speed');
   }
-  return { command: 'speed', cells, seconds };
+  const threads = threadsOf(read.values['threads']);
+  if (threads === null) return misused(threadsNotice(read.values['threads']), 'speed');
+  return { command: 'speed', cells, seconds, threads };
+}
+
+/** 'all' when nothing is asked for; null when what is asked for is no number of threads. */
+function threadsOf(asked: unknown): Threads | null {
+  if (asked === undefined) return 'all';
+  const threads = Number(asked);
+  return Number.isInteger(threads) && threads >= 1 && threads <= MOST_THREADS ? threads : null;
+}
+
+function threadsNotice(asked: unknown): string {
+  return `--threads ${String(asked)}: give a whole number from 1 to ${MOST_THREADS}.`;
 }
 
 type Read =

@@ -13,7 +13,7 @@ export const HELP: Readonly<Record<HelpTopic, string>> = {
 Each command has its own --help. Job files are saved by the bench in the browser (npm start), or written by hand.
 Exit code: 0 done; 1 the command line or the job is wrong; 2 the run failed; 130 stopped by Ctrl-C.`,
 
-  run: `guidewall run JOB.json [--out DIR] [--quiet]
+  run: `guidewall run JOB.json [--out DIR] [--threads N] [--quiet]
 
 Runs the job, then its reference run where the job asks for one, and writes into DIR:
 
@@ -23,6 +23,7 @@ Runs the job, then its reference run where the job asks for one, and writes into
 
   --out DIR   folder for the files, made if missing; files of these names in it are replaced
               (default: JOB-results in the current folder)
+  --threads N threads that work on a run: 1 to 8 (default: the cores there are); the numbers do not depend on it
   --quiet     no progress
   --help      this text
 
@@ -39,11 +40,12 @@ most, and remarks. Runs nothing.
 
 Exit code: 0 the job can be run; 1 it cannot: each error names the place in the job, the value and the mend.`,
 
-  speed: `guidewall speed [--cells N] [--seconds S]
+  speed: `guidewall speed [--cells N] [--seconds S] [--threads N]
 
 Steps an empty square sheet with absorbing edges, one line current and one probe, and prints million cell updates a second.
 
   --cells N     cells along each side, absorbers included: 64 to 8192 (default 1024)
   --seconds S   time to measure for: 0.1 to 600 (default 3)
+  --threads N   threads that work on it: 1 to 8 (default: the cores there are)
   --help        this text`,
 };

@@ -70,3 +70,7 @@ export function duration(seconds: number): string {
   if (whole < 3600) return `${Math.floor(whole / 60)} min ${whole % 60} s`;
   return `${Math.floor(whole / 3600)} h ${Math.floor((whole % 3600) / 60)} min`;
 }
+
+export function threadWords(threads: number): string {
+  return threads === 1 ? 'one thread' : `${threads} threads`;
+}

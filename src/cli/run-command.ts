@@ -8,14 +8,21 @@ import type { Job } from '../model/job.ts';
 import { makeNodeSession } from '../../workers/session.node.ts';
 import { runToEnd } from '../../workers/run-to-end.ts';
 import type { RunRecord, RunRole } from '../../workers/protocol.ts';
+import type { Threads } from './arguments.ts';
 import { EXIT } from './exit-code.ts';
 import type { ExitCode } from './exit-code.ts';
 import { onInterrupt } from './interrupt.ts';
-import { NO_PROGRESS, makeProgressLine } from './progress-line.ts';
+import { NO_PROGRESS, makeProgressLine, threadWords } from './progress-line.ts';
 import { readJobFile, refuse } from './read-job-file.ts';
 import { makeResultFiles } from './result-files.ts';
+import { threadCount } from './thread-count.ts';
 
-export async function runCommand(asked: { jobFile: string; directory: string; quiet: boolean }): Promise<ExitCode> {
+export async function runCommand(asked: {
+  jobFile: string;
+  directory: string;
+  quiet: boolean;
+  threads: Threads;
+}): Promise<ExitCode> {
   const job = await readJobFile(asked.jobFile);
   if (!job.ok) return refuse(asked.jobFile, job.errors);
   // Before the run: an hour's work must not end at a folder that cannot be written.
@@ -23,11 +30,14 @@ export async function runCommand(asked: { jobFile: string; directory: string; qu
 
   const interrupt = onInterrupt();
   const progress = asked.quiet ? NO_PROGRESS : makeProgressLine(process.stderr, () => performance.now());
-  const session = await makeNodeSession();
+  const session = makeNodeSession();
   const run = (role: RunRole): Promise<Result<RunRecord>> =>
-    runToEnd(session, job.value, role, (state) => {
-      progress.show(role, state);
-      return state.state === 'done' || !interrupt.came;
+    runToEnd(session, job.value, role, {
+      threads: threadCount(asked.threads),
+      onProgress(state) {
+        progress.show(role, state);
+        return state.state === 'done' || !interrupt.came;
+      },
     });
   const main = await run('main');
   const wantsReference = job.value.reference !== 'none' && main.ok && main.value.trouble === null && !interrupt.came;
@@ -66,10 +76,11 @@ async function report(
   return interrupted ? EXIT.interrupted : EXIT.done;
 }
 
-function describeRun({ role, stopReason, steps, dtSeconds, energyDb, wallSeconds, megaCellsPerSecond }: RunRecord): string {
+function describeRun(run: RunRecord): string {
+  const { role, stopReason, steps, dtSeconds, energyDb, wallSeconds, megaCellsPerSecond } = run;
   return (
     `${role}: ${stopReason} after ${steps} steps (${formatQuantity(steps * dtSeconds, 'time', 4)}), energy at ${energyDb.toFixed(1)} dB; ` +
-    `${wallSeconds.toFixed(2)} s at ${megaCellsPerSecond.toFixed(0)} Mcell/s`
+    `${wallSeconds.toFixed(2)} s at ${megaCellsPerSecond.toFixed(0)} Mcell/s, ${threadWords(run.threads)}`
   );
 }
 

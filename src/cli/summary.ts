@@ -14,6 +14,7 @@ export interface RunSummary {
   /** Energy left on the sheet below its peak. */
   readonly energyDb: number;
   readonly wallSeconds: number;
+  readonly threads: number;
   readonly megaCellsPerSecond: number;
 }
 
@@ -86,8 +87,9 @@ export function makeSummary(input: SummaryInput): Summary {
 }
 
 function summariseRun(run: RunRecord): RunSummary {
-  const { planHash, stopReason, steps, energyDb, wallSeconds, megaCellsPerSecond } = run;
-  return { planHash, stopReason, steps, timeSeconds: steps * run.dtSeconds, energyDb, wallSeconds, megaCellsPerSecond };
+  const { planHash, stopReason, steps, energyDb, wallSeconds, threads, megaCellsPerSecond } = run;
+  const timeSeconds = steps * run.dtSeconds;
+  return { planHash, stopReason, steps, timeSeconds, energyDb, wallSeconds, threads, megaCellsPerSecond };
 }
 
 function summariseProbe(probe: Job['probes'][number], { listedHertz, main, insertion }: SummaryInput): ProbeSummary {

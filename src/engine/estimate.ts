@@ -36,7 +36,7 @@ export interface Estimate {
 export function makeEstimate(job: ResolvedJob, megaCellsPerSecond: number): Result<Estimate> {
   const grid = makeGrid(job);
   if (!grid.ok) return grid;
-  const feasible = checkFeasible(job, grid.value);
+  const feasible = checkFeasible(job, grid.value, 1);
   if (!feasible.ok) return feasible;
   const { launches, bound } = feasible.value;
   return ok(estimateOf(job, grid.value, bound.total, megaCellsPerSecond, launches, []));

@@ -4,13 +4,15 @@ import { fail, ok, type Result } from '../base/result.ts';
 import type { ResolvedJob } from '../model/job.ts';
 import type { Grid } from './grid.ts';
 import { align, rowStride } from './image.ts';
-import { HEADER_WORDS } from './layout.ts';
-import { chooseLaunch, type Launch } from './plane-wave.ts';
+import { HEADER_WORDS, MOST_THREADS } from './layout.ts';
+import { chooseLaunch, lineGeometry, type Launch } from './plane-wave.ts';
 
 /** Steps in one call of the kernel: tables of drives and records are this long. */
 export const SLICE_STEPS = 256;
 /** Steps that run down the rows together while these are in cache. */
 export const BLOCK_STEPS = 8;
+/** Threads follow each other down the rows block by block: each wants this many rows of its own. */
+const ROWS_PER_THREAD = 4 * BLOCK_STEPS;
 /** Images larger than this are refused: a 32-bit address space with room for the page. */
 export const MEMORY_LIMIT_BYTES = 1.75 * 2 ** 30;
 
@@ -22,12 +24,15 @@ export interface Bound {
 }
 
 export interface Feasible {
+  /** Sets of levels of the incident lines: one, or one more than the threads that may work on the run. */
+  readonly buffers: number;
   /** Launch of each plane wave, by drive id. */
   readonly launches: ReadonlyMap<string, Launch>;
   readonly bound: Bound;
 }
 
-export function checkFeasible(job: ResolvedJob, grid: Grid): Result<Feasible> {
+/** `threads` is how many may work on the run; fewer are planned for when there are few rows, or when rows close a loop. */
+export function checkFeasible(job: ResolvedJob, grid: Grid, threads: number): Result<Feasible> {
   if (job.drives.length === 0) {
     return fail({
       code: 'no drive',
@@ -43,7 +48,14 @@ export function checkFeasible(job: ResolvedJob, grid: Grid): Result<Feasible> {
     if (!launch.ok) return launch;
     launches.set(drive.id, launch.value);
   }
-  const bound = boundOf(grid, job);
+  // A repeating top edge closes the loop of rows after every step: no block can follow another.
+  const useful = grid.y.repeats ? 1 : Math.min(threads, MOST_THREADS, Math.floor(grid.y.count / ROWS_PER_THREAD));
+  const buffers = useful > 1 ? useful + 1 : 1;
+  const lines = job.drives.flatMap((drive) =>
+    drive.kind === 'plane wave' ? [lineGeometry(grid, drive, launches.get(drive.id)!)] : [],
+  );
+  const bound = boundOf(grid, job, lines, buffers);
+  if (bound.total > MEMORY_LIMIT_BYTES && buffers > 1) return checkFeasible(job, grid, 1);
   if (bound.total > MEMORY_LIMIT_BYTES) {
     return fail({
       code: 'job too large',
@@ -52,7 +64,7 @@ export function checkFeasible(job: ResolvedJob, grid: Grid): Result<Feasible> {
       hint: 'Take larger cells, a smaller sheet, or a lower top of the band.',
     });
   }
-  return ok({ launches, bound });
+  return ok({ launches, bound, buffers });
 }
 
 function megabytes(bytes: number): string {
@@ -60,18 +72,25 @@ function megabytes(bytes: number): string {
 }
 
 /** Upper bounds in bytes, from counts alone. */
-function boundOf(grid: Grid, job: ResolvedJob): Bound {
+function boundOf(
+  grid: Grid,
+  job: ResolvedJob,
+  lines: readonly { readonly length: number; readonly fed: number }[],
+  buffers: number,
+): Bound {
   const { x, y } = grid;
   const stride = rowStride(x.count);
   const rows = y.count + 3;
   const stripColumns = x.before + x.after + 32;
   // Each span's psi is filled to 16 bytes twice; strips have two psi a column, y strips two a cell.
   const psi = 8 * (rows * stripColumns + (y.before + y.after + 4) * (stride + 64));
-  const lines = job.drives.filter((drive) => drive.kind === 'plane wave').length;
-  const longest = 40 * (x.count + y.count + 80);
-  const tables =
-    SLICE_STEPS * (8 * job.drives.length + 12 * job.probes.length + lines * 8 * 41) + lines * 24 * longest * (BLOCK_STEPS + 1);
+  const levels = lines.reduce(
+    (sum, line) => sum + (24 * line.length + 16) * (BLOCK_STEPS + 1) * buffers + 8 * SLICE_STEPS * line.fed + 64,
+    0,
+  );
+  const tables = SLICE_STEPS * (8 * job.drives.length + 12 * job.probes.length) + levels;
   const state = align(4 * HEADER_WORDS + 12 * rows * stride + psi + tables + 4096);
   const arrays = job.parts.some((part) => part.kind !== 'rectangle') ? 24 * rows * stride : 0;
-  return { state, total: state + arrays + rows * 512 };
+  const fixed = arrays + rows * 512 + lines.reduce((sum, line) => sum + 32 * line.length, 0);
+  return { state, total: state + fixed };
 }

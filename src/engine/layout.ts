@@ -17,7 +17,20 @@ export const H_LINE_TABLE = 11; // offset of the first line record
 export const H_WRAP_Y = 12; // 1 when bottom and top edges repeat
 export const H_SLICE = 13; // most steps in one call
 export const H_BLOCK = 14; // steps that follow each other down the rows while these are in cache
+export const H_BUFFERS = 15; // sets of levels of the incident lines: 1, or one more than the threads that work on blocks at once
 export const HEADER_WORDS = 16;
+
+// Words by which threads keep in step, in bytes from the start of the memory (below the image, so that clearing it leaves
+// them), each in a cache line of its own.
+export const SYNC_READY = 32768; // int32: helpers that serve
+export const SYNC_GO = 32832; // int32: slice number times 16, plus the threads that work on it; changing it starts them
+export const SYNC_STOP = 32896; // int32: 1 sends the helpers home at the next start
+export const SYNC_STEPS = 32960; // int32: steps of the slice
+export const SYNC_FIRST_BLOCK = 33024; // int64: number of the slice's first block, counted since the memory was made
+export const SYNC_ENDED = 33088; // int32: helpers that have ended the slice
+export const SYNC_LINES = 33152; // int64: blocks whose incident lines are stepped
+export const SYNC_PROGRESS = 33216; // int64 a thread, 64 bytes apart: block number times (rows + 2), plus rows it is done with
+export const MOST_THREADS = 8;
 
 // Columns before the first unknown: u[-1] of the first column falls into zeros that nobody writes.
 export const PAD_COLUMNS = 4;
@@ -84,7 +97,7 @@ export const LINE_FED = 3; // the first entries of U are given, not computed
 export const LINE_U = 4; // offsets of U, Vx, Vy at level 0: float64 arrays
 export const LINE_VX = 5;
 export const LINE_VY = 6;
-export const LINE_LEVEL = 7; // bytes from one level to the next
+export const LINE_LEVEL = 7; // bytes from one level to the next; a buffer holds a block's, level 0 included
 export const LINE_A = 8; // a and b per half entry (u at 2r, vx at 2r - my, vy at 2r - mx): the matched absorbing tail
 export const LINE_B = 9;
 export const LINE_BU = 10; // float64, two words each

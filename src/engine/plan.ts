@@ -7,7 +7,7 @@ import { estimateOf, type Estimate } from './estimate.ts';
 import type { Remark } from './remark.ts';
 import { makeGrid, type Grid } from './grid.ts';
 import { hashText } from './hash.ts';
-import { BLOCK_STEPS, checkFeasible, SLICE_STEPS } from './feasible.ts';
+import { BLOCK_STEPS, checkFeasible, SLICE_STEPS, type Feasible } from './feasible.ts';
 import { align, ImageWriter, rowStride, StateRoom } from './image.ts';
 import * as L from './layout.ts';
 import { paintParts } from './paint.ts';
@@ -57,6 +57,8 @@ export interface RunPlan {
   readonly stepLimit: number;
   /** Most steps in one call of the kernel. */
   readonly slice: number;
+  /** Most threads that can work on it: 1, or as many as were offered and are of use. */
+  readonly threads: number;
   /** Bytes of the whole image; header and `fixed` are given, the rest is zero at t = 0. */
   readonly imageBytes: number;
   readonly header: Int32Array<ArrayBuffer>;
@@ -82,21 +84,20 @@ export const NOMINAL_SPEED = 500;
 
 /**
  * Makes the plan of a job. The reference plan keeps grid, launch and drives of the main one and leaves out the parts
- * marked so, or all of them. Errors: no drive, a drive in metal, a plane wave that fits no launch, a job over the memory
+ * marked so, or all of them. `threads` is how many may work on the run; the numbers do not depend on it. Errors: no drive, a drive in metal, a plane wave that fits no launch, a job over the memory
  * limit, a grid out of range.
  */
-export function makePlan(job: ResolvedJob, role: RunRole): Result<RunPlan> {
+export function makePlan(job: ResolvedJob, role: RunRole, threads = 1): Result<RunPlan> {
   const gridResult = makeGrid(job);
   if (!gridResult.ok) return gridResult;
   const grid = gridResult.value;
-  const feasible = checkFeasible(job, grid);
+  const feasible = checkFeasible(job, grid, threads);
   if (!feasible.ok) return feasible;
-  const { launches, bound } = feasible.value;
   const parts =
     role === 'main' ? job.parts : job.reference === 'empty sheet' ? [] : job.parts.filter((part) => !part.leftOutOfReference);
   const regions = paintParts(parts, job.sheet);
   const coefficients = withCache(makeCoefficients(grid, regions, job.sheet.background, job.band));
-  return writePlan(job, role, grid, coefficients, launches, bound.state);
+  return writePlan(job, role, grid, coefficients, feasible.value);
 }
 
 /** Rows of coefficients are asked for by spans, drives and faces: made once per key. */
@@ -118,9 +119,9 @@ function writePlan(
   role: RunRole,
   grid: Grid,
   coefficients: Coefficients,
-  launches: ReadonlyMap<string, Launch>,
-  stateBound: number,
+  { launches, bound, buffers }: Feasible,
 ): Result<RunPlan> {
+  const stateBound = bound.state;
   const { x, y } = grid;
   const stride = rowStride(x.count);
   const rows = y.count + 3;
@@ -136,7 +137,7 @@ function writePlan(
 
   const sourceCount = job.drives.filter((drive) => drive.kind === 'line current').length;
   const sourceTableOffset = state.take(8 * SLICE_STEPS * Math.max(1, sourceCount));
-  const drives = writeDrives(job, grid, coefficients, launches, state, image, {
+  const drives = writeDrives(job, grid, coefficients, launches, buffers, state, image, {
     offset: sourceTableOffset,
     stepBytes: 8 * sourceCount,
   });
@@ -161,6 +162,7 @@ function writePlan(
   header[L.H_LINE_TABLE] = lineTableOffset;
   header[L.H_WRAP_Y] = y.repeats ? 1 : 0;
   header[L.H_SLICE] = SLICE_STEPS;
+  header[L.H_BUFFERS] = buffers;
   // A repeating top edge closes the loop of rows after every step.
   header[L.H_BLOCK] = y.repeats ? 1 : BLOCK_STEPS;
 
@@ -176,6 +178,7 @@ function writePlan(
     dtSeconds: grid.dtSeconds,
     stepLimit,
     slice: SLICE_STEPS,
+    threads: Math.max(1, buffers - 1),
     imageBytes,
     header,
     fixed,
@@ -253,6 +256,7 @@ function writeDrives(
   grid: Grid,
   coefficients: Coefficients,
   launches: ReadonlyMap<string, Launch>,
+  buffers: number,
   state: StateRoom,
   image: ImageWriter,
   table: { readonly offset: number; readonly stepBytes: number },
@@ -286,7 +290,7 @@ function writeDrives(
     const launch = launches.get(drive.id)!;
     const line = makeIncidentLine(job, grid, drive, launch, waveform);
     const record = lineTableOffset + 4 * L.LINE_WORDS * lineCount++;
-    const { feed, sourceOf } = writeLine(image, state, record, line);
+    const { feed, sourceOf } = writeLine(image, state, record, line, buffers);
     feeds.push(feed);
     for (const term of makeFaceTerms(grid, launch, line)) {
       const row = coefficients.rowAt(term.j);
@@ -336,9 +340,10 @@ function writeLine(
   state: StateRoom,
   record: number,
   line: IncidentLine,
+  buffers: number,
 ): { feed: LineFeed; sourceOf: (field: 'u' | 'vx' | 'vy', entry: number) => PointTerm['source'] } {
   const level = align(24 * line.length);
-  const start = state.take(level * (BLOCK_STEPS + 1));
+  const start = state.take(level * (BLOCK_STEPS + 1) * buffers);
   const offsets = { u: start, vx: start + 8 * line.length, vy: start + 16 * line.length };
   const a = image.take(8 * line.a.length);
   const b = image.take(8 * line.b.length);

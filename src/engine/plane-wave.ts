@@ -200,6 +200,30 @@ function wholeSteps(c: number, s: number): [number, number] {
   return [best[0] * Math.sign(c), best[1] * Math.sign(s)];
 }
 
+interface LineGeometry {
+  readonly mx: number;
+  readonly my: number;
+  readonly fed: number;
+  /** The entry of the corner that the wave meets first. */
+  readonly start: number;
+  readonly tail: number;
+  readonly length: number;
+}
+
+/** Steps along the line per cell, and how many entries it needs for what the launch spans. */
+export function lineGeometry(grid: Grid, drive: PlaneWave, launch: Launch): LineGeometry {
+  const clean = (value: number): number => (Math.abs(value) < 1e-9 ? 0 : value);
+  const [mx, my] = wholeSteps(
+    clean(Math.cos(drive.angleRadians)) * grid.dxMetres,
+    clean(Math.sin(drive.angleRadians)) * grid.dyMetres,
+  );
+  const fed = Math.max(Math.abs(mx), Math.abs(my));
+  const tail = TAIL_PER_FED * fed;
+  const span = Math.abs(mx) * (launch.i1 - launch.i0 + 2) + Math.abs(my) * (launch.j1 - launch.j0 + 2);
+  const start = 3 * fed;
+  return { mx, my, fed, start, tail, length: start + span + 2 * fed + tail };
+}
+
 export function makeIncidentLine(
   job: ResolvedJob,
   grid: Grid,
@@ -208,18 +232,10 @@ export function makeIncidentLine(
   waveform: Waveform,
 ): IncidentLine {
   const { dxMetres, dyMetres } = grid;
-  const c = Math.cos(drive.angleRadians);
-  const s = Math.sin(drive.angleRadians);
-  const clean = (value: number): number => (Math.abs(value) < 1e-9 ? 0 : value);
-  const [mx, my] = wholeSteps(clean(c) * dxMetres, clean(s) * dyMetres);
+  const { mx, my, fed, start, tail, length } = lineGeometry(grid, drive, launch);
   const back = constantsOf(job.sheet.background, job.section);
   const index = Math.sqrt(back.uM * back.vM);
   const { uScale, pace } = kernelScales(grid);
-  const fed = Math.max(Math.abs(mx), Math.abs(my));
-  const tail = TAIL_PER_FED * fed;
-  const span = Math.abs(mx) * (launch.i1 - launch.i0 + 2) + Math.abs(my) * (launch.j1 - launch.j0 + 2);
-  const start = 3 * fed;
-  const length = start + span + 2 * fed + tail;
   const a = new Float64Array(2 * length).fill(1);
   const b = new Float64Array(2 * length).fill(1);
   for (let half = 2 * (length - tail); half < 2 * length; half++) {

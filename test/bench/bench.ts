@@ -1,10 +1,13 @@
 // Owns `npm run bench`: throughput and start-up as ratios measured side by side in one run, as a table and as JSON.
 // `--native` adds a textbook C version, compiled on the spot, when a C compiler is there.
 import { mkdirSync, readFileSync, writeFileSync } from 'node:fs';
-import { cpus } from 'node:os';
+import { availableParallelism, cpus } from 'node:os';
+import { BLOCK_STEPS } from '../../src/engine/feasible.ts';
+import { MOST_THREADS } from '../../src/engine/layout.ts';
 import { makePlan } from '../../src/engine/plan.ts';
 import type { ResolvedJob } from '../../src/model/job.ts';
 import { openRun, type Run } from '../../workers/run.ts';
+import { makeThreadPool } from '../../workers/thread-pool.node.ts';
 import { benchJob, diagonalPart } from './bench-jobs.ts';
 import { watchedRate } from './live-view.ts';
 import { measureNative } from './native.ts';
@@ -19,7 +22,13 @@ interface Row {
   readonly against: string;
 }
 
-const kernel = await WebAssembly.compile(readFileSync(new URL('../../workers/kernel/kernel.wasm', import.meta.url)));
+const [kernel, sharedKernel] = await Promise.all(
+  ['kernel', 'kernel-shared'].map((name) =>
+    WebAssembly.compile(readFileSync(new URL(`../../workers/kernel/${name}.wasm`, import.meta.url))),
+  ),
+);
+const pool = makeThreadPool();
+const threads = Math.min(MOST_THREADS, availableParallelism());
 const rows: Row[] = [];
 
 function add(name: string, value: number, unit: string, against: Row | null): Row {
@@ -28,17 +37,20 @@ function add(name: string, value: number, unit: string, against: Row | null): Ro
   return row;
 }
 
-async function open(job: ResolvedJob): Promise<Run> {
-  const plan = makePlan(job, 'main');
+async function open(job: ResolvedJob, many = 1): Promise<Run> {
+  const plan = makePlan(job, 'main', many);
   if (!plan.ok) throw new Error(plan.errors[0].message);
-  const run = await openRun(plan.value, kernel);
+  const run = await (plan.value.threads > 1 ? openRun(plan.value, sharedKernel!, pool) : openRun(plan.value, kernel!));
   if (!run.ok) throw new Error(run.errors[0].message);
+  while (run.value.threads < plan.value.threads) await new Promise((resolve) => setTimeout(resolve, 5));
   return run.value;
 }
 
 /** Best of several stretches, Mcell/s: the machine's other work only ever slows a stretch down. */
 function bestRate(cells: number, step: (steps: number) => void): number {
-  const steps = Math.max(8, Math.round(1.5e8 / cells));
+  // Whole blocks for every thread.
+  const whole = BLOCK_STEPS * threads;
+  const steps = whole * Math.max(1, Math.round(1.5e8 / cells / whole));
   step(steps);
   let best = 0;
   for (let k = 0; k < 6; k++) {
@@ -49,12 +61,14 @@ function bestRate(cells: number, step: (steps: number) => void): number {
   return best;
 }
 
-async function kernelRate(job: ResolvedJob): Promise<number> {
-  const run = await open(job);
+async function kernelRate(job: ResolvedJob, many = 1): Promise<number> {
+  const run = await open(job, many);
   const advance = (steps: number): void => {
     for (let left = steps; left > 0; left -= run.plan.slice) run.advance(Math.min(left, run.plan.slice));
   };
-  return bestRate(run.plan.estimate.cellsTotal, advance);
+  const rate = bestRate(run.plan.estimate.cellsTotal, advance);
+  run.close();
+  return rate;
 }
 
 const n = 1024;
@@ -84,6 +98,15 @@ for (const size of [256, 512, 2048, 4096]) {
   add(`one thread, ${size} x ${size}`, await kernelRate(benchJob({ cellsX: size - 24, cellsY: size - 24 })), 'Mcell/s', bare);
 }
 
+if (threads > 1) {
+  for (const size of [1024, 4096]) {
+    const name = `${size} x ${size}`;
+    const alone = rows.find((row) => row.name.startsWith('one thread') && row.name.endsWith(name))!;
+    const rate = await kernelRate(benchJob({ cellsX: size - 24, cellsY: size - 24 }), threads);
+    add(`${threads} threads, ${name}`, rate, 'Mcell/s', alone);
+  }
+}
+
 const startJob = benchJob({ cellsX: 488, cellsY: 488, parts: [diagonalPart({ cells: 488, share: 0.3, medium: {} })] });
 let started = Infinity;
 for (let k = 0; k < 4; k++) {
@@ -108,14 +131,17 @@ add('session, 30 frames a second of 1600 x 900', await watchedRate(30), 'Mcell/s
 
 if (process.argv.includes('--native')) {
   for (const size of [1024, 4096]) {
-    const rate = measureNative(size);
-    if (rate === null) {
-      console.log('No C compiler here: the native rows are left out.');
-      break;
+    for (const many of new Set([1, threads])) {
+      const words = many === 1 ? 'one thread' : `${many} threads`;
+      const rate = measureNative(size, many);
+      if (rate === null) {
+        console.log('No C compiler with OpenMP here: a native row is left out.');
+        continue;
+      }
+      const native = add(`textbook C, ${words}, ${size} x ${size}`, rate, 'Mcell/s', null);
+      const own = rows.find((row) => row.name.startsWith(words) && row.name.endsWith(`${size} x ${size}`));
+      if (own !== undefined) add(`${words}, ${size} x ${size}, against C`, own.value, 'Mcell/s', native);
     }
-    const native = add(`textbook C, one thread, ${size} x ${size}`, rate, 'Mcell/s', null);
-    const own = rows.find((row) => row.name.startsWith('one thread') && row.name.endsWith(`${size} x ${size}`));
-    if (own !== undefined) add(`one thread, ${size} x ${size}, against C`, own.value, 'Mcell/s', native);
   }
 }
 

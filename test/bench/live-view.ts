@@ -20,13 +20,13 @@ function watchedJob(): Job {
 
 /** Mcell/s over a second and a half of wall time, polled `framesPerSecond` times a second (0: not at all). */
 export async function watchedRate(framesPerSecond: number): Promise<number> {
-  const session = await makeNodeSession();
+  const session = makeNodeSession();
   const opened = await session.open(watchedJob(), 'main');
   if (!opened.ok) throw new Error(opened.errors[0].message);
   let best = 0;
   await session.start();
   for (let stretch = 0; stretch < 4; stretch++) {
-    const request = { view: null, maxWidth: 0, maxHeight: 0, sinceStep: Number.MAX_SAFE_INTEGER };
+    const request = { view: null, maxWidth: 0, maxHeight: 0, sinceStep: Infinity };
     const before = (await session.poll(request)).progress.step;
     const start = performance.now();
     let sinceStep = before;

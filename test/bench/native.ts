@@ -20,11 +20,13 @@ int main(int argc, char **argv) {
   for (int k = 0; k < 6; k++) {
     double start = now();
     for (int s = 0; s < steps; s++) {
+#pragma omp parallel for schedule(static)
       for (int j = 0; j < n - 1; j++) {
         float *restrict x = vx + (size_t)j * n, *restrict y = vy + (size_t)j * n;
         const float *restrict e = u + (size_t)j * n;
         for (int i = 0; i < n - 1; i++) { x[i] -= 0.7f * (e[i + n] - e[i]); y[i] += 0.7f * (e[i + 1] - e[i]); }
       }
+#pragma omp parallel for schedule(static)
       for (int j = 1; j < n - 1; j++) {
         float *restrict e = u + (size_t)j * n;
         const float *restrict x = vx + (size_t)j * n, *restrict y = vy + (size_t)j * n, *restrict p = a + (size_t)j * n, *restrict q = b + (size_t)j * n;
@@ -39,17 +41,24 @@ int main(int argc, char **argv) {
 }
 `;
 
-/** Mcell/s of the C version on one thread, or null without a compiler. */
-export function measureNative(size: number): number | null {
+/** Mcell/s of the C version on so many threads (OpenMP), or null without a compiler. */
+export function measureNative(size: number, threads: number): number | null {
   const folder = mkdtempSync(join(tmpdir(), 'guidewall-bench-'));
   try {
     writeFileSync(join(folder, 'textbook.c'), SOURCE);
     try {
-      execFileSync('cc', ['-O3', '-march=native', '-o', join(folder, 'textbook'), join(folder, 'textbook.c')], { stdio: 'pipe' });
+      execFileSync('cc', ['-O3', '-march=native', '-fopenmp', '-o', join(folder, 'textbook'), join(folder, 'textbook.c')], {
+        stdio: 'pipe',
+      });
     } catch {
       return null;
     }
-    return Number(execFileSync(join(folder, 'textbook'), [String(size)], { encoding: 'utf8' }));
+    return Number(
+      execFileSync(join(folder, 'textbook'), [String(size)], {
+        encoding: 'utf8',
+        env: { ...process.env, OMP_NUM_THREADS: String(threads), OMP_PROC_BIND: 'true' },
+      }),
+    );
   } finally {
     rmSync(folder, { recursive: true, force: true });
   }

@@ -38,5 +38,10 @@ test('with the connection cut after loading, every example still opens and runs'
     await bench.openExample(title);
     await bench.waitForEnd();
   }
+  // With its reference known the run takes all threads: their program must have come with the page.
+  await bench.runStrip.getByRole('button', { name: 'Run', exact: true }).click();
+  await bench.waitForEnd();
+  const cores = await page.evaluate(() => navigator.hardwareConcurrency);
+  await expect(bench.runStrip).toContainText(cores > 1 ? /on \d threads/ : 'cell/s');
   await page.context().setOffline(false);
 });

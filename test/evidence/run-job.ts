@@ -23,7 +23,7 @@ export function unwrap<T>(result: Result<T>): T {
 /** Runs a job document (a plain object) to its stop; throws with the errors, or when the run went wrong. */
 export async function runJob(draft: unknown, role: RunRole = 'main'): Promise<RunRecord> {
   const job = unwrap(parseJob(draft));
-  const session = await makeNodeSession();
+  const session = makeNodeSession();
   const record = unwrap(await runToEnd(session, job, role));
   if (record.trouble !== null) throw new Error(record.trouble);
   return record;

@@ -3,7 +3,7 @@
 import { useState } from 'react';
 import { CURRENT_LINE, lineStyleOfKept } from '../../app/line-styles.ts';
 import { describeKept } from '../../app/run-book.ts';
-import { runActions } from '../../app/run-controller.ts';
+import { runActions } from '../../app/run-actions.ts';
 import type { KeptRun } from '../../app/run-store.ts';
 import { useRunStore } from '../../app/run-store.ts';
 import { LineSample } from './LineSample.tsx';

@@ -5,7 +5,7 @@ import { useShallow } from 'zustand/react/shallow';
 import type { FieldView } from '../../../workers/protocol.ts';
 import { componentsOf } from '../../app/field-choice.ts';
 import { useJobStore } from '../../app/job-store.ts';
-import { runActions } from '../../app/run-controller.ts';
+import { runActions } from '../../app/run-actions.ts';
 import { useRunStore } from '../../app/run-store.ts';
 import { useViewStore, type ViewState } from '../../app/view-store.ts';
 import { isMagnitude, readScale, unitOf } from './field-image.ts';

@@ -53,7 +53,10 @@ export function progressWords(progress: RunProgress, estimate: Estimate | null):
     progress.stepLimit > 0 ? ` of ${progress.state === 'done' ? 'at most' : 'about'} ${groupDigits(progress.stepLimit)}` : '';
   const ended = progress.stopReason === null ? [] : [STOP_WORDS[progress.stopReason]];
   const rest = [...ended, `step ${groupDigits(progress.step)}${of}`];
-  if (progress.megaCellsPerSecond > 0) rest.push(throughputWords(progress.megaCellsPerSecond));
+  if (progress.megaCellsPerSecond > 0) {
+    const on = progress.threads > 1 ? ` on ${progress.threads} threads` : '';
+    rest.push(`${throughputWords(progress.megaCellsPerSecond)}${on}`);
+  }
   if (progress.state === 'running') rest.push(`${durationWords(progress.secondsLeft)} left`);
   rest.push(energyWords(progress.energyDb));
   if (progress.state === 'held') rest.push('held');

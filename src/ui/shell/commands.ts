@@ -12,7 +12,7 @@ import {
 } from '../../app/files.ts';
 import { componentsOf } from '../../app/field-choice.ts';
 import { useJobStore } from '../../app/job-store.ts';
-import { runActions } from '../../app/run-controller.ts';
+import { runActions } from '../../app/run-actions.ts';
 import { useRunStore } from '../../app/run-store.ts';
 import { useViewStore } from '../../app/view-store.ts';
 import type { PartKind } from '../../model/job.ts';

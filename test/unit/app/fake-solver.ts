@@ -36,6 +36,7 @@ export function makeRecord(role: RunRole, steps = 10, stopReason: StopReason = '
     trouble: null,
     energyDb: -60,
     wallSeconds: 0.01,
+    threads: 1,
     megaCellsPerSecond: 250,
     estimate: ESTIMATE,
     frequenciesHertz: Float64Array.of(1e9, 6e9),
@@ -49,6 +50,8 @@ export function makeRecord(role: RunRole, steps = 10, stopReason: StopReason = '
 export class FakeSolver implements SessionApi {
   readonly calls: string[] = [];
   readonly views: (FieldView | null)[] = [];
+  /** Threads offered with each opening. */
+  readonly threads: number[] = [];
   openError: AppError | null = null;
   /** Set to make every further call fail, as those to a dead worker do. */
   dead: Error | null = null;
@@ -73,7 +76,12 @@ export class FakeSolver implements SessionApi {
     if (this.dead !== null) throw this.dead;
   }
 
-  async open(_job: Job, role: RunRole) {
+  async prepare() {
+    await this.call('prepare');
+  }
+
+  async open(_job: Job, role: RunRole, threads = 1) {
+    this.threads.push(threads);
     await this.call(`open ${role}`);
     if (this.openError !== null) return fail<Estimate>(this.openError);
     this.role = role;
@@ -163,6 +171,7 @@ export class FakeSolver implements SessionApi {
       timeSeconds: this.step * ESTIMATE.dtSeconds,
       energyDb: -this.step,
       megaCellsPerSecond: 250,
+      threads: 1,
       secondsLeft: 1,
       stopReason: this.stopReason,
       trouble: null,

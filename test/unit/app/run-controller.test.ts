@@ -27,6 +27,7 @@ function makeBench(solvers: FakeSolver[]) {
     nextFrame: turn,
     wait: turn,
     now: () => (clock += 30),
+    threads: () => 4,
   });
   detach = controller.attach();
   return { controller, spawned };
@@ -107,6 +108,19 @@ test('a moved wall that is left out of the reference does not run the reference 
   await controller.run();
   await settle();
   expect(reference.calls.filter((call) => call === 'open reference')).toHaveLength(2);
+});
+
+test('a run shares the threads with the reference that goes beside it, and has them all when none does', async () => {
+  const main = new FakeSolver();
+  const reference = new FakeSolver();
+  const { controller } = makeBench([main, reference]);
+  await controller.run();
+  await settle();
+  useJobStore.getState().dispatch({ do: 'move', ids: ['wall-1'], dxMetres: 0.004, dyMetres: 0 });
+  await controller.run();
+  await settle();
+  expect(main.threads).toEqual([2, 4]);
+  expect(reference.threads).toEqual([2]);
 });
 
 test('without a part that is left out there is no reference run', async () => {

@@ -5,7 +5,7 @@ import { parseCommandLine } from '../../../src/cli/arguments.ts';
 
 describe('run', () => {
   test('takes the job file and the folder for the results, in either order', () => {
-    const expected = { command: 'run', jobFile: 'jobs/slot.json', directory: 'out', quiet: false };
+    const expected = { command: 'run', jobFile: 'jobs/slot.json', directory: 'out', quiet: false, threads: 'all' };
     expect(parseCommandLine(['run', 'jobs/slot.json', '--out', 'out'])).toEqual(expected);
     expect(parseCommandLine(['run', '--out=out', 'jobs/slot.json'])).toEqual(expected);
   });
@@ -41,13 +41,27 @@ describe('run', () => {
   });
 });
 
+describe('threads', () => {
+  test.each(['run a.json', 'speed'])('%s takes a number of them from 1 to 8', (words) => {
+    expect(parseCommandLine([...words.split(' '), '--threads', '2'])).toMatchObject({ threads: 2 });
+  });
+
+  test.each(['0', '9', '1.5', 'many', ''])('"%s" is refused', (asked) => {
+    expect(parseCommandLine(['run', 'a.json', `--threads=${asked}`])).toMatchObject({
+      command: 'misused',
+      message: expect.stringContaining('from 1 to 8'),
+    });
+  });
+});
+
 describe('speed', () => {
   test('measures 1024 cells a side for three seconds unless told otherwise', () => {
-    expect(parseCommandLine(['speed'])).toEqual({ command: 'speed', cells: 1024, seconds: 3 });
+    expect(parseCommandLine(['speed'])).toEqual({ command: 'speed', cells: 1024, seconds: 3, threads: 'all' });
     expect(parseCommandLine(['speed', '--cells', '256', '--seconds', '0.5'])).toEqual({
       command: 'speed',
       cells: 256,
       seconds: 0.5,
+      threads: 'all',
     });
   });
 

@@ -12,6 +12,7 @@ function makeProgress(step: number, changes: Partial<RunProgress> = {}): RunProg
     timeSeconds: step * 1e-12,
     energyDb: -12.34,
     megaCellsPerSecond: 900.4,
+    threads: 1,
     secondsLeft: 75,
     stopReason: null,
     trouble: null,

@@ -15,6 +15,7 @@ async function runOnMachine(milliseconds: number): Promise<RunRecord> {
   if (!job.ok) throw new Error(job.errors[0].message);
   let time = 0;
   const session = makeSession({
+    pool: null,
     loadKernel: () => Promise.resolve(kernel),
     yieldTurn: () => new Promise((resolve) => setImmediate(resolve)),
     now: () => (time += milliseconds),

@@ -19,6 +19,7 @@ function makeRecord(role: RunRecord['role'], stopReason: StopReason = 'decayed')
     trouble: null,
     energyDb: -60.5,
     wallSeconds: 0.25,
+    threads: 1,
     megaCellsPerSecond: 800,
     estimate: {
       cellsX: 200,

@@ -35,7 +35,7 @@ const everything = { view: null, maxWidth: 0, maxHeight: 0, sinceStep: 0 } as co
 
 describe('a session', () => {
   test('runs until the energy has decayed, and its spectrum is the transform of its trace', async () => {
-    const result = await runToEnd(await makeNodeSession(), job(), 'main');
+    const result = await runToEnd(makeNodeSession(), job(), 'main');
     if (!result.ok) throw new Error(result.errors[0].message);
     const run = result.value;
     expect(run.stopReason).toBe('decayed');
@@ -56,7 +56,7 @@ describe('a session', () => {
   });
 
   test('in-plane spectra undo the half-step mean of the trace', async () => {
-    const result = await runToEnd(await makeNodeSession(), job(), 'main');
+    const result = await runToEnd(makeNodeSession(), job(), 'main');
     if (!result.ok) throw new Error(result.errors[0].message);
     const run = result.value;
     const k = run.frequenciesHertz.length - 1;
@@ -74,9 +74,9 @@ describe('a session', () => {
   });
 
   test('held, stepped and resumed it ends with the same samples as a run in one go', async () => {
-    const straight = await runToEnd(await makeNodeSession(), job(), 'main');
+    const straight = await runToEnd(makeNodeSession(), job(), 'main');
     if (!straight.ok) throw new Error(straight.errors[0].message);
-    const session = await makeNodeSession();
+    const session = makeNodeSession();
     await session.open(job(), 'main');
     for (let k = 0; k < 5; k++) await session.stepOnce();
     expect((await session.poll(everything)).progress).toMatchObject({ state: 'held', step: 5 });
@@ -92,7 +92,7 @@ describe('a session', () => {
   });
 
   test('rewound it starts again from nothing', async () => {
-    const session = await makeNodeSession();
+    const session = makeNodeSession();
     await session.open(job(), 'main');
     for (let k = 0; k < 30; k++) await session.stepOnce();
     const first = (await session.poll(everything)).traces[0]!.samples[0];
@@ -103,10 +103,10 @@ describe('a session', () => {
   });
 
   test('stops at the time limit, and by hand with what there is', async () => {
-    const short = await runToEnd(await makeNodeSession(), job({ stop: { decay: 'never', after: '0.5 ns' } }), 'main');
+    const short = await runToEnd(makeNodeSession(), job({ stop: { decay: 'never', after: '0.5 ns' } }), 'main');
     expect(short.ok && short.value.stopReason).toBe('time limit');
     expect(short.ok && short.value.steps).toBe(Math.ceil(0.5e-9 / (short.ok ? short.value.dtSeconds : 1)));
-    const session = await makeNodeSession();
+    const session = makeNodeSession();
     await session.open(job(), 'main');
     for (let k = 0; k < 10; k++) await session.stepOnce();
     await session.stop();
@@ -125,13 +125,13 @@ describe('a session', () => {
         },
       ],
     });
-    const result = await runToEnd(await makeNodeSession(), wild, 'main');
+    const result = await runToEnd(makeNodeSession(), wild, 'main');
     expect(result.ok && result.value.stopReason).toBe('not finite');
     expect(result.ok && result.value.trouble).toMatch(/no longer a finite number at step \d+, at .* mm, .* mm .*likely cause/);
   });
 
   test('an open job gives frames of every view at the asked size', async () => {
-    const session = await makeNodeSession();
+    const session = makeNodeSession();
     await session.open(job(), 'main');
     for (let k = 0; k < 60; k++) await session.stepOnce();
     for (const view of ['Ez', 'Hx', 'Hy', '|E|', '|H|'] as const) {
@@ -139,5 +139,27 @@ describe('a session', () => {
       expect(frame).toMatchObject({ view, width: 31, height: 41, step: 60 });
       expect(frame!.peak).toBeGreaterThan(0);
     }
+  });
+});
+
+test('two threads give the record that one gives, held, stepped and resumed on the way', async () => {
+  const fine = job({ grid: { cells: { x: '1 mm', y: '1 mm' } } });
+  const one = await runToEnd(makeNodeSession(), fine, 'main');
+  const session = makeNodeSession();
+  await session.open(fine, 'main', 2);
+  await session.start();
+  await new Promise((resolve) => setTimeout(resolve, 5));
+  await session.hold();
+  await session.stepOnce();
+  await session.start();
+  while ((await session.poll(everything)).progress.state !== 'done') await new Promise((resolve) => setTimeout(resolve, 5));
+  const two = await record(session);
+  if (!one.ok) throw new Error(one.errors[0].message);
+  expect(two.steps).toBe(one.value.steps);
+  expect(two.traces).toEqual(one.value.traces);
+  expect(two.planHash).toBe(one.value.planHash);
+  two.spectra[0]!.components.forEach(({ re, im }, k) => {
+    expect([...re]).toEqual([...one.value.spectra[0]!.components[k]!.re]);
+    expect([...im]).toEqual([...one.value.spectra[0]!.components[k]!.im]);
   });
 });

@@ -7,6 +7,7 @@
 //   vy' = avy*vy + bvy*(u' - u'Left)
 import {
   H_BLOCK,
+  H_BUFFERS,
   H_CHANNELS,
   H_LINES,
   H_LINE_TABLE,
@@ -64,6 +65,14 @@ import {
   SPAN_Y_BV,
   SPAN_Y_CU,
   SPAN_Y_CV,
+  SYNC_ENDED,
+  SYNC_FIRST_BLOCK,
+  SYNC_GO,
+  SYNC_LINES,
+  SYNC_PROGRESS,
+  SYNC_READY,
+  SYNC_STEPS,
+  SYNC_STOP,
   TAP_CHANNEL,
   TAP_COLUMN,
   TAP_FIELD,
@@ -311,7 +320,7 @@ function lossySpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: 
   }
 }
 
-// `step` counts in the slice (source table), `level` in the block (incident lines).
+// `step` counts in the slice (source table), `level` over the buffers of the incident lines.
 function points(at: usize, count: i32, base: usize, u: usize, vx: usize, vy: usize, step: i32, level: i32): void {
   for (let k = 0; k < count; k++) {
     const field = word(at, POINT_FIELD);
@@ -512,11 +521,12 @@ function stepLine(line: usize, base: usize, step: i32, level: i32): void {
 }
 
 /**
- * Advances the image at `base` by `steps` (at most the slice); clears and fills the record, reads source and feed tables.
- * Steps go in blocks: step k of a block follows step k - 1 one row behind, while its rows are still in cache (Wonnacott
- * 2000). All that touches a row is done in its pass, so the block's size never changes a bit of the answer.
+ * Steps `first` to `first + block` of a slice, by a front that runs down the rows: step k of a block follows step k - 1 one row
+ * behind, while its rows are still in cache (Wonnacott 2000). All that touches a row is done in its pass, so the block's size
+ * never changes a bit of the answer. `number` counts blocks since the memory was made. With several threads block n follows
+ * block n - 1, which another thread works on, just as closely; only the slice's first block has nothing to wait for.
  */
-export function advance(base: usize, steps: i32): void {
+function passBlock(base: usize, first: i32, block: i32, number: i64, thread: i32, threads: i32): void {
   const row = <usize>word(base, H_STRIDE) << 2;
   const rows = word(base, H_ROWS);
   const u = base + offset(base, H_U);
@@ -524,33 +534,153 @@ export function advance(base: usize, steps: i32): void {
   const vy = base + offset(base, H_VY);
   const table = base + offset(base, H_ROW_TABLE);
   const channels = <usize>word(base, H_CHANNELS) << 2;
-  const lines = word(base, H_LINES);
-  const lineTable = base + offset(base, H_LINE_TABLE);
-  const lineBytes = <usize>LINE_WORDS << 2;
   const wrapY = word(base, H_WRAP_Y);
   const record = base + offset(base, H_RECORD);
-  memory.fill(record, 0, channels * <usize>steps);
-  for (let first = 0; first < steps; first += word(base, H_BLOCK)) {
-    const block = min(word(base, H_BLOCK), steps - first);
-    for (let n = 0; n < lines; n++) {
-      for (let k = 0; k < block; k++) stepLine(lineTable + <usize>n * lineBytes, base, first + k, k);
+  const levels = word(base, H_BLOCK) + 1;
+  const buffers = word(base, H_BUFFERS);
+  const level = <i32>(number % <i64>buffers) * levels;
+  const span = <i64>(rows + 2);
+  const mine = <usize>SYNC_PROGRESS + (<usize>thread << 6);
+  const before = <usize>SYNC_PROGRESS + (<usize>((thread + threads - 1) % threads) << 6);
+
+  if (threads > 1) waitFor(SYNC_LINES, number);
+  stepLines(base, first, block, level);
+  if (buffers > 1) {
+    carryLines(base, level + block, <i32>((number + 1) % <i64>buffers) * levels);
+    if (threads > 1) tell(SYNC_LINES, number + 1);
+  }
+  for (let front = 1; front < rows + block; front++) {
+    // A row reads its neighbour above: the block before must be done with that too.
+    if (threads > 1 && first > 0) waitFor(before, (number - 1) * span + <i64>min(front + 1, rows));
+    for (let k = max(0, front - rows); k < min(block, front); k++) {
+      const j = front - k;
+      const at = <usize>j * row;
+      // The link below the first row is the one above the last: the ghost row carries it (blocks of one step only).
+      if (wrapY && j == rows) memory.copy(u + at, u + row, row);
+      const step = first + k;
+      passRow(base + offset(table, j), base, u + at, vx + at, vy + at, row, record + <usize>step * channels, step, level + k);
+      if (wrapY && j == rows) memory.copy(vx + row, vx + at, row);
     }
-    for (let front = 1; front < rows + block; front++) {
-      for (let k = max(0, front - rows); k < min(block, front); k++) {
-        const j = front - k;
-        const at = <usize>j * row;
-        // The link below the first row is the one above the last: the ghost row carries it (blocks of one step only).
-        if (wrapY && j == rows) memory.copy(u + at, u + row, row);
-        const step = first + k;
-        passRow(base + offset(table, j), base, u + at, vx + at, vy + at, row, record + <usize>step * channels, step, k);
-        if (wrapY && j == rows) memory.copy(vx + row, vx + at, row);
+    if (threads > 1) tell(mine, number * span + <i64>max(0, front - block + 1));
+  }
+  if (buffers == 1) carryLines(base, level + block, level);
+}
+
+function stepLines(base: usize, first: i32, block: i32, level: i32): void {
+  const table = base + offset(base, H_LINE_TABLE);
+  for (let n = 0; n < word(base, H_LINES); n++) {
+    for (let k = 0; k < block; k++) stepLine(table + <usize>n * (<usize>LINE_WORDS << 2), base, first + k, level + k);
+  }
+}
+
+// The last level of one block is the first of the next.
+function carryLines(base: usize, from: i32, to: i32): void {
+  const table = base + offset(base, H_LINE_TABLE);
+  for (let n = 0; n < word(base, H_LINES); n++) {
+    const line = table + <usize>n * (<usize>LINE_WORDS << 2);
+    const bytes = offset(line, LINE_LEVEL);
+    const start = base + offset(line, LINE_U);
+    memory.copy(start + bytes * <usize>to, start + bytes * <usize>from, bytes);
+  }
+}
+
+function passBlocks(base: usize, steps: i32, firstBlock: i64, thread: i32, threads: i32): void {
+  const most = word(base, H_BLOCK);
+  for (let first = 0, n = firstBlock; first < steps; first += most, n++) {
+    if (n % <i64>threads == <i64>thread) passBlock(base, first, min(most, steps - first), n, thread, threads);
+  }
+}
+
+const SPINS = 2000;
+const NAP_MILLISECONDS = 0.05;
+const LONG_MILLISECONDS = 1e9;
+
+// Wait while the int32 at `address` holds `value`, and end such waits: see workers/kernel-imports.mjs.
+// @ts-ignore: decorator
+@external("env", "nap") declare function nap(address: usize, value: i32, milliseconds: f64): void;
+// @ts-ignore: decorator
+@external("env", "wake") declare function wake(address: usize): void;
+
+// Waits until the int64 at `address` is at least `value`: spins, then naps, for its writer may have lost its core.
+function waitFor(address: usize, value: i64): void {
+  if (ASC_FEATURE_THREADS) {
+    for (let spins = 0; ; spins++) {
+      const seen = atomic.load<i64>(address);
+      if (seen >= value) return;
+      if (spins > SPINS) nap(address, <i32>seen, NAP_MILLISECONDS);
+    }
+  }
+}
+
+function tell(address: usize, value: i64): void {
+  if (ASC_FEATURE_THREADS) atomic.store<i64>(address, value);
+}
+
+/**
+ * Advances the image at `base` by `steps` (at most the slice); clears and fills the record, reads source and feed tables.
+ * Helpers that serve the same memory take their share of the blocks.
+ */
+export function advance(base: usize, steps: i32): void {
+  memory.fill(base + offset(base, H_RECORD), 0, (<usize>word(base, H_CHANNELS) << 2) * <usize>steps);
+  const firstBlock = load<i64>(SYNC_FIRST_BLOCK);
+  if (ASC_FEATURE_THREADS) {
+    const threads = min(atomic.load<i32>(SYNC_READY) + 1, word(base, H_BUFFERS) - 1);
+    if (threads > 1) {
+      store<i32>(SYNC_STEPS, steps);
+      atomic.store<i32>(SYNC_ENDED, 0);
+      start(threads);
+      passBlocks(base, steps, firstBlock, 0, threads);
+      for (let spins = 0; ; spins++) {
+        const ended = atomic.load<i32>(SYNC_ENDED);
+        if (ended == threads - 1) break;
+        if (spins > SPINS) nap(SYNC_ENDED, ended, NAP_MILLISECONDS);
       }
+    } else {
+      passBlocks(base, steps, firstBlock, 0, 1);
+      // A helper may join at the next slice.
+      atomic.store<i64>(SYNC_LINES, firstBlock + blocksOf(base, steps));
     }
-    for (let n = 0; n < lines; n++) {
-      const line = lineTable + <usize>n * lineBytes;
-      const level = offset(line, LINE_LEVEL);
-      memory.copy(base + offset(line, LINE_U), base + offset(line, LINE_U) + level * <usize>block, level);
+  } else {
+    passBlocks(base, steps, firstBlock, 0, 1);
+  }
+  store<i64>(SYNC_FIRST_BLOCK, firstBlock + blocksOf(base, steps));
+}
+
+function blocksOf(base: usize, steps: i32): i64 {
+  const most = word(base, H_BLOCK);
+  return <i64>((steps + most - 1) / most);
+}
+
+function start(threads: i32): void {
+  if (ASC_FEATURE_THREADS) {
+    atomic.store<i32>(SYNC_GO, (((atomic.load<i32>(SYNC_GO) >> 4) + 1) << 4) | threads);
+    wake(SYNC_GO);
+  }
+}
+
+/** Works on slices beside `advance` of another thread until `dismiss`. Needs shared memory. */
+export function serve(base: usize): void {
+  if (ASC_FEATURE_THREADS) {
+    let seen = atomic.load<i32>(SYNC_GO);
+    const thread = atomic.add<i32>(SYNC_READY, 1) + 1;
+    while (!atomic.load<i32>(SYNC_STOP)) {
+      for (let spins = 0; atomic.load<i32>(SYNC_GO) == seen; spins++) {
+        if (spins > SPINS) nap(SYNC_GO, seen, LONG_MILLISECONDS);
+      }
+      seen = atomic.load<i32>(SYNC_GO);
+      // Those counted in are waited for, so that the slice's words stand until they have ended.
+      if (thread >= (seen & 15)) continue;
+      passBlocks(base, load<i32>(SYNC_STEPS), load<i64>(SYNC_FIRST_BLOCK), thread, seen & 15);
+      atomic.add<i32>(SYNC_ENDED, 1);
     }
+  }
+}
+
+/** Sends the helpers home; none may be at work. */
+export function dismiss(): void {
+  if (ASC_FEATURE_THREADS) {
+    atomic.store<i32>(SYNC_STOP, 1);
+    start(0);
   }
 }
 

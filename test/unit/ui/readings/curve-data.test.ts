@@ -31,6 +31,7 @@ function record(frequencies: number[], ez: number[], drive: number[]): RunRecord
     trouble: null,
     energyDb: -60,
     wallSeconds: 1,
+    threads: 1,
     megaCellsPerSecond: 1,
     estimate: {} as RunRecord['estimate'],
     frequenciesHertz: Float64Array.from(frequencies),

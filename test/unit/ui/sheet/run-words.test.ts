@@ -12,6 +12,7 @@ const RUNNING: RunProgress = {
   timeSeconds: 3.42e-9,
   energyDb: -12.34,
   megaCellsPerSecond: 1100,
+  threads: 1,
   secondsLeft: 0.2,
   stopReason: null,
   trouble: null,

@@ -1,0 +1,4 @@
+export interface KernelImports extends Record<string, WebAssembly.ImportValue> {
+  readonly memory: WebAssembly.Memory;
+}
+export function kernelImports(memory: WebAssembly.Memory): KernelImports;
