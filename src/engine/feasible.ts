@@ -1,10 +1,10 @@
 // Owns the reasons why a job cannot be run: no drive, no launch for its plane wave, too much memory.
 // Must not know how the image is written.
 import { fail, ok, type Result } from '../base/result.ts';
-import type { ResolvedJob } from '../model/job.ts';
+import type { ResolvedJob, XY } from '../model/job.ts';
 import type { Grid } from './grid.ts';
 import { align, rowStride } from './image.ts';
-import { HEADER_WORDS, MOST_THREADS } from './layout.ts';
+import { HEADER_WORDS, MOST_THREADS, SPAN_WORDS } from './layout.ts';
 import { chooseLaunch, lineGeometry, type Launch } from './plane-wave.ts';
 
 /** Steps in one call of the kernel: tables of drives and records are this long. */
@@ -90,7 +90,37 @@ function boundOf(
   );
   const tables = SLICE_STEPS * (8 * job.drives.length + 12 * job.probes.length) + levels;
   const state = align(4 * HEADER_WORDS + 12 * rows * stride + psi + tables + 4096);
-  const arrays = job.parts.some((part) => part.kind !== 'rectangle') ? 24 * rows * stride : 0;
-  const fixed = arrays + rows * 512 + lines.reduce((sum, line) => sum + 32 * line.length, 0);
+  const fixed = coefficientBytes(grid, job, stride) + lines.reduce((sum, line) => sum + 32 * line.length, 0);
   return { state, total: state + fixed };
+}
+
+/** Rows of their own content hold arrays; every row holds a program, a record for each of its spans. */
+function coefficientBytes(grid: Grid, job: ResolvedJob, stride: number): number {
+  const { x, y } = grid;
+  const rows = y.count + 2;
+  const lossy = [job.sheet.background, ...job.parts.map((part) => part.medium)].some(
+    (medium) => !medium.metal && (medium.sigma > 0 || medium.sigmaMagnetic > 0),
+  );
+  let ownRows = y.before + y.after + 4;
+  let corners = 0;
+  for (const part of job.parts) {
+    const ys = part.outline.flatMap((ring) => ring.map((at) => at[1]));
+    const tall = Math.ceil((Math.max(...ys) - Math.min(...ys)) / grid.dyMetres);
+    // Of an upright rectangle only the rows at its upper and lower side differ, and those between from those without it.
+    ownRows += isUpright(part.outline) ? 10 : tall + 4;
+    corners += part.outline.reduce((sum, ring) => sum + ring.length, 0);
+  }
+  // A plain span is at least four groups of four cells long, so there are at most two spans to five groups.
+  const spans = Math.min(Math.ceil(0.1 * stride) + 8, 5 + 2 * corners + x.before + x.after);
+  const perRow = 4 * SPAN_WORDS * spans + 64;
+  return Math.min(rows, ownRows) * stride * 4 * (lossy ? 6 : 3) + rows * perRow + 400 * job.probes.length + 8192;
+}
+
+function isUpright(outline: readonly (readonly XY[])[]): boolean {
+  return outline.every((ring) =>
+    ring.every((at, k) => {
+      const next = ring[(k + 1) % ring.length]!;
+      return at[0] === next[0] || at[1] === next[1];
+    }),
+  );
 }
