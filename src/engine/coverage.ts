@@ -1,5 +1,6 @@
 // Owns exact area fractions: how much of each half cell of the sheet each region covers.
 // Must not know media, coefficients or polarisation.
+import { intervalAt } from '../base/interval-at.ts';
 import type { Region } from './paint.ts';
 
 /**
@@ -88,18 +89,6 @@ function sortedRow(row: Map<number, [number, number]> | undefined): [number, [nu
   return row === undefined ? [] : [...row].sort((a, b) => a[0] - b[0]);
 }
 
-/** Index of the half cell that holds `at`, by bisection; clamped to the range. */
-export function cellAt(borders: Float64Array, at: number): number {
-  let low = 0;
-  let high = borders.length - 1;
-  while (high - low > 1) {
-    const middle = (low + high) >> 1;
-    if (borders[middle]! <= at) low = middle;
-    else high = middle;
-  }
-  return low;
-}
-
 type Cells = Map<number, Map<number, [area: number, carry: number]>>;
 
 /** Rings run counter-clockwise round covered area, so an edge that goes down has the area to its right. */
@@ -108,7 +97,7 @@ function scanEdge(x0: number, y0: number, x1: number, y1: number, xs: Float64Arr
   const sign = y1 < y0 ? 1 : -1;
   const [xl, yl, xh, yh] = y0 < y1 ? [x0, y0, x1, y1] : [x1, y1, x0, y0];
   const slope = (xh - xl) / (yh - yl);
-  for (let row = cellAt(ys, yl); row < ys.length - 1; row++) {
+  for (let row = intervalAt(ys, yl); row < ys.length - 1; row++) {
     const from = Math.max(yl, ys[row]!);
     const to = Math.min(yh, ys[row + 1]!);
     if (ys[row]! >= yh) break;
@@ -126,7 +115,7 @@ function scanRow(a: number, b: number, share: number, xs: Float64Array, row: num
   const right = Math.max(a, b);
   let list = cells.get(row);
   if (list === undefined) cells.set(row, (list = new Map()));
-  const first = cellAt(xs, left);
+  const first = intervalAt(xs, left);
   if (right <= xs[first + 1]! || right === left) {
     leave(list, first, share, (xs[first + 1]! - (left + right) / 2) / (xs[first + 1]! - xs[first]!));
     return;

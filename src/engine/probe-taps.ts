@@ -1,5 +1,6 @@
 // Owns how a probe reads: which unknowns, with which weights, give the physical fields at a point.
-// Must not know time: the half-step alignment is made in records.ts.
+// Must not know time: the half-step alignment is made in workers/run.ts.
+import { intervalAt } from '../base/interval-at.ts';
 import type { XY } from '../model/job.ts';
 import type { Axis, Grid } from './grid.ts';
 import { kernelScales } from './coefficients.ts';
@@ -64,13 +65,8 @@ function linkShares(axis: Axis, at: number): Share[] {
 }
 
 function between(positions: Float64Array, at: number): Share[] {
-  let low = 0;
-  let high = positions.length - 1;
-  while (high - low > 1) {
-    const middle = (low + high) >> 1;
-    if (positions[middle]! <= at) low = middle;
-    else high = middle;
-  }
+  const low = intervalAt(positions, at);
+  const high = low + 1;
   const part = (at - positions[low]!) / (positions[high]! - positions[low]!);
   return part < 1e-9
     ? [[low, 1]]

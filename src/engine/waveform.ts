@@ -1,5 +1,6 @@
 // Owns the time course of drives.
 // Must not know grids or images.
+import { intervalAt } from '../base/interval-at.ts';
 import type { ResolvedWaveform } from '../model/job.ts';
 
 /** A waveform ready to be evaluated: cloneable, amplitude 1 at its peak (samples as given). */
@@ -89,14 +90,10 @@ export function waveformEnd(waveform: Waveform): number {
 }
 
 function interpolate(times: readonly number[], values: readonly number[], t: number): number {
-  let low = 0;
-  let high = times.length - 1;
-  if (high < 0 || t < times[0]! || t > times[high]!) return 0;
-  while (high - low > 1) {
-    const middle = (low + high) >> 1;
-    if (times[middle]! <= t) low = middle;
-    else high = middle;
-  }
+  const last = times.length - 1;
+  if (last < 0 || t < times[0]! || t > times[last]!) return 0;
+  const low = intervalAt(times, t);
+  const high = Math.min(low + 1, last);
   const span = times[high]! - times[low]!;
   const part = span > 0 ? (t - times[low]!) / span : 0;
   return values[low]! + part * (values[high]! - values[low]!);
