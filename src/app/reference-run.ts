@@ -5,7 +5,8 @@ import { fail, ok } from '../base/result.ts';
 import type { RunRecord, SessionApi } from '../../workers/protocol.ts';
 import type { Estimate } from '../engine/estimate.ts';
 import type { Job, ResolvedJob } from '../model/job.ts';
-import { wantsReference, makeReferenceKey } from './run-question.ts';
+import { wantsReference } from '../model/reference.ts';
+import { makeReferenceKey } from './run-question.ts';
 import type { SolverSeat } from './solver-seat.ts';
 
 export type ReferenceState = 'none' | 'running' | 'done' | 'failed';

@@ -1,4 +1,4 @@
-// Owns when two jobs ask the same question of the solver, and when a reference run is worth its time.
+// Owns when two jobs ask the same question of the solver.
 // Must not know stores, workers, or how a run is made.
 import type { Estimate } from '../engine/estimate.ts';
 import { hashText } from '../engine/hash.ts';
@@ -16,18 +16,6 @@ export function asksTheSame(a: Job, b: Job): boolean {
 export function standsOnSameSheet(a: ResolvedJob, b: ResolvedJob): boolean {
   const same = a.sheet.widthMetres === b.sheet.widthMetres && a.sheet.heightMetres === b.sheet.heightMetres;
   return same && a.section === b.section;
-}
-
-/** A reference run that leaves out nothing would repeat the run itself. */
-export function wantsReference(job: Job): boolean {
-  switch (job.reference) {
-    case 'none':
-      return false;
-    case 'empty sheet':
-      return job.parts.length > 0;
-    case 'without marked parts':
-      return job.parts.some((part) => part.leftOutOfReference);
-  }
 }
 
 /**

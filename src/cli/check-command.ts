@@ -5,6 +5,8 @@ import { NOMINAL_SPEED, makePlan } from '../engine/plan.ts';
 import type { Estimate } from '../engine/estimate.ts';
 import { describeSection } from '../model/describe-section.ts';
 import type { Job } from '../model/job.ts';
+import { wantsReference } from '../model/reference.ts';
+import { materialRemarks, referenceRemarks } from '../model/remarks.ts';
 import { resolveJob } from '../model/resolve-job.ts';
 import { EXIT } from './exit-code.ts';
 import type { ExitCode } from './exit-code.ts';
@@ -26,7 +28,7 @@ export async function checkCommand({ jobFile }: { jobFile: string }): Promise<Ex
 /** The lines `check` prints: what the section stands for, grid, step, memory, time, remarks. */
 export function describeJob(job: Job, estimate: Estimate): string[] {
   const { cellsX, cellsY, cellsTotal, dxMetres, dyMetres, dtSeconds, stepLimit } = estimate;
-  const reference = job.reference === 'none' ? '' : '; the reference run takes as long again';
+  const reference = wantsReference(job) ? '; the reference run takes as long again' : '';
   return [
     job.title === '' ? 'Untitled job' : job.title,
     describeSection(job),
@@ -37,7 +39,9 @@ export function describeJob(job: Job, estimate: Estimate): string[] {
     `memory      ${(estimate.memoryBytes / 1e6).toFixed(1)} MB`,
     `run time    ${duration(estimate.secondsAtMost)} at most at ${NOMINAL_SPEED} Mcell/s${reference}`,
     ...(estimate.launch === null ? [] : [`plane wave  ${estimate.launch}`]),
-    ...estimate.remarks.map(({ path, message }) => `remark      ${path === undefined ? '' : `${path}: `}${message}`),
+    ...[...estimate.remarks, ...materialRemarks(job), ...referenceRemarks(job)].map(
+      ({ path, message }) => `remark      ${path === undefined ? '' : `${path}: `}${message}`,
+    ),
     '',
     'The job can be run.',
   ];

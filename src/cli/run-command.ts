@@ -5,6 +5,7 @@ import { join } from 'node:path';
 import { formatQuantity } from '../base/quantity.ts';
 import type { Result } from '../base/result.ts';
 import type { Job } from '../model/job.ts';
+import { wantsReference } from '../model/reference.ts';
 import { makeNodeSession } from '../../workers/session.node.ts';
 import { runToEnd } from '../../workers/run-to-end.ts';
 import type { RunRecord, RunRole } from '../../workers/protocol.ts';
@@ -40,8 +41,8 @@ export async function runCommand(asked: {
       },
     });
   const main = await run('main');
-  const wantsReference = job.value.reference !== 'none' && main.ok && main.value.trouble === null && !interrupt.came;
-  const reference = wantsReference ? await run('reference') : null;
+  const goOn = wantsReference(job.value) && main.ok && main.value.trouble === null && !interrupt.came;
+  const reference = goOn ? await run('reference') : null;
   progress.end();
   interrupt.release();
 

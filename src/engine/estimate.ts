@@ -4,6 +4,7 @@ import { ok, type Result } from '../base/result.ts';
 import type { ResolvedJob } from '../model/job.ts';
 import { checkFeasible } from './feasible.ts';
 import { makeGrid, type Grid } from './grid.ts';
+import { jobRemarks } from './job-remarks.ts';
 import type { Launch } from './plane-wave.ts';
 import type { Remark } from './remark.ts';
 
@@ -68,13 +69,7 @@ export function estimateOf(
     cellsPerShortestWavelength,
     phaseErrorDegrees: phaseErrorDegrees(grid, job.band.toHertz),
     launch: launch?.words ?? null,
-    remarks: [
-      ...grid.remarks,
-      ...resolutionRemarks(job, grid, cellsPerShortestWavelength),
-      ...probeRemarks(job, grid, launches),
-      ...driveRemarks(job),
-      ...more,
-    ],
+    remarks: [...grid.remarks, ...jobRemarks(job, grid, launches, cellsPerShortestWavelength), ...more],
   };
 }
 
@@ -89,71 +84,4 @@ function phaseErrorDegrees(grid: Grid, hertz: number): number {
   const s = Math.sin(Math.PI * hertz * grid.dtSeconds);
   const numeric = (2 / d) * Math.asin(Math.min(1, (d / (speed * grid.dtSeconds)) * s));
   return 360 * (numeric / k - 1);
-}
-
-function resolutionRemarks(job: ResolvedJob, grid: Grid, cellsPerShortestWavelength: number): Remark[] {
-  const remarks: Remark[] = [];
-  if (cellsPerShortestWavelength < 10) {
-    remarks.push({
-      code: 'coarse grid',
-      path: 'grid.cells',
-      message: `Only ${cellsPerShortestWavelength.toFixed(1)} cells per shortest wavelength: below 10 the wave is visibly slow; 20 is usual (common practice).`,
-    });
-  }
-  const cell = Math.max(grid.dxMetres, grid.dyMetres);
-  for (const part of job.parts) {
-    if (part.smallestMetres >= 2 * cell) continue;
-    const cells = part.smallestMetres / cell;
-    remarks.push({
-      code: 'part near cell size',
-      path: part.id,
-      message: `${part.name} is ${(part.smallestMetres * 1e3).toPrecision(3)} mm across, ${cells.toFixed(1)} cells of ${(cell * 1e3).toPrecision(3)} mm: ${
-        job.parts.some((other) => other.medium.metal)
-          ? 'edges of metal are moved to the nearest grid line, so its width is rounded to whole cells'
-          : 'it is averaged into its cells'
-      }. Take smaller cells to resolve it.`,
-    });
-  }
-  return remarks;
-}
-
-function probeRemarks(job: ResolvedJob, grid: Grid, launches: ReadonlyMap<string, Launch>): Remark[] {
-  const remarks: Remark[] = [];
-  for (const launch of launches.values()) {
-    const { x, y } = grid;
-    for (const probe of job.probes) {
-      const px = probe.at[0] + job.sheet.originMetres[0];
-      const py = probe.at[1] + job.sheet.originMetres[1];
-      const inside =
-        px >= x.position[launch.i0]! &&
-        px <= x.position[launch.i1]! &&
-        py >= y.position[launch.j0]! &&
-        py <= y.position[launch.j1]!;
-      // Over the full height the sides of the sheet are not faces.
-      const aside =
-        launch.kind === 'full height' && (launch.faces[0] === 'left' || launch.faces[0] === 'right')
-          ? px >= x.position[launch.i0]! && px <= x.position[launch.i1]!
-          : py >= y.position[launch.j0]! && py <= y.position[launch.j1]!;
-      if (launch.kind === 'box' ? inside : aside) continue;
-      remarks.push({
-        code: 'probe in scattered field',
-        path: probe.id,
-        message: `${probe.name} stands outside the total field: it reads the scattered (reflected) field only.`,
-      });
-    }
-  }
-  return remarks;
-}
-
-function driveRemarks(job: ResolvedJob): Remark[] {
-  const [first, ...others] = job.drives;
-  if (first === undefined || others.every((drive) => JSON.stringify(drive.waveform) === JSON.stringify(first.waveform)))
-    return [];
-  return [
-    {
-      code: 'several waveforms',
-      path: first.id,
-      message: `The drives have different waveforms: levels are read against that of ${first.name}; insertion ratios are those of all together.`,
-    },
-  ];
 }

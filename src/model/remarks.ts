@@ -6,6 +6,7 @@ import type { Job } from './job.ts';
 import { findMaterial } from './materials/library.ts';
 import type { LibraryMaterial } from './materials/material.ts';
 import { mediumOf } from './materials/material.ts';
+import { wantsReference } from './reference.ts';
 
 export interface JobRemark {
   readonly code: string;
@@ -68,12 +69,10 @@ export function materialRemarks(job: Job): readonly JobRemark[] {
   });
 }
 
-/** A reference run that cannot differ from the run itself says nothing. */
+/** Without a part left out there is nothing to compare with. */
 export function referenceRemarks(job: Job): readonly JobRemark[] {
-  const same =
-    (job.reference === 'without marked parts' && !job.parts.some((part) => part.leftOutOfReference)) ||
-    (job.reference === 'empty sheet' && job.parts.length === 0);
-  if (!same) return [];
-  const message = 'The reference run is the run itself: no part is left out of it, so the insertion ratio is 0 dB throughout.';
+  if (job.reference === 'none' || wantsReference(job)) return [];
+  const message =
+    'Nothing is left out of the reference, so it would be the run itself: it is not made, and there is no insertion ratio.';
   return [{ code: 'reference', message, path: 'reference' }];
 }
