@@ -9,6 +9,9 @@ export interface SpawnedSession {
   close(): void;
 }
 
+/** A worker that has not answered by then was blocked, or its program could not be fetched. */
+const START_MILLISECONDS = 15_000;
+
 const METHODS = ['prepare', 'open', 'start', 'hold', 'stepOnce', 'rewind', 'stop', 'setPace', 'poll', 'record'] as const;
 
 /** Starts a worker whose runs may take up to `threads` threads. Comlink promises hang for ever when a worker dies, so each call races with its death. */
@@ -30,7 +33,15 @@ export function spawnSession(threads: number): SpawnedSession {
     ]),
   );
   const api = guarded as unknown as SessionApi;
-  api.prepare(threads).catch(() => undefined); // the call that needs it will tell
+  const slow = setTimeout(() => {
+    worker.terminate();
+    die(new Error('The solver did not start within 15 s: its program may be blocked, or could not be fetched. Reload the page.'));
+  }, START_MILLISECONDS);
+  // What goes wrong is told by the call that needs it.
+  void api
+    .prepare(threads)
+    .catch(() => undefined)
+    .finally(() => clearTimeout(slow));
   return {
     api,
     close() {

@@ -87,11 +87,11 @@ export class Saver {
     this.lastWords = lastWords;
   }
 
-  /** Saves from now on; what is in the stores now counts as saved when `saved` says so. */
-  attach(saved: Restored): () => void {
+  /** Saves from now on; `opened`, the job put in the store from what was restored, counts as saved when `saved` says so. */
+  attach(saved: Restored, opened = useJobStore.getState().job): () => void {
     // A note becomes a saved job by being written once more.
     const onShelf = saved.job !== null && this.lastWords.read() === null;
-    this.savedJob = onShelf ? useJobStore.getState().job : null;
+    this.savedJob = onShelf ? opened : null;
     this.savedRuns = new Map(saved.kept.map((run) => [run.id, run]));
     const endJob = useJobStore.subscribe((state, before) => {
       if (state.job !== before.job) this.saveSoon();
@@ -99,7 +99,7 @@ export class Saver {
     const endRuns = useRunStore.subscribe((state, before) => {
       if (state.kept !== before.kept) this.saveSoon();
     });
-    if (this.savedJob === null) this.saveSoon();
+    if (useJobStore.getState().job !== this.savedJob) this.saveSoon();
     return () => {
       endJob();
       endRuns();

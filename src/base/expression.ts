@@ -94,6 +94,19 @@ export function evaluateExpression(text: string, lookUp: NameLookup, depth = 0):
   return tokens.ok ? new Reader(text, tokens.value, lookUp).readAll(depth) : tokens;
 }
 
+/** The text with one name written for another; units, which follow a number, a name or a bracket, are left alone. */
+export function renameInExpression(text: string, from: string, to: string): string {
+  const tokens = splitTokens(text);
+  if (!tokens.ok) return text;
+  const isName = ({ kind, text: word }: Token, k: number): boolean => {
+    const before = tokens.value[k - 1];
+    return kind === 'word' && word === from && (before === undefined || (before.kind === 'sign' && before.text !== ')'));
+  };
+  return tokens.value
+    .filter(isName)
+    .reduceRight((renamed, { at }) => renamed.slice(0, at) + to + renamed.slice(at + from.length), text);
+}
+
 /** Recursive descent over the tokens. The first trouble is kept and everything after it is NOTHING. */
 class Reader {
   private readonly text: string;

@@ -13,6 +13,7 @@ import {
   setAt,
   setSection,
 } from './edit-job.ts';
+import { renameValue } from './rename-value.ts';
 import type { Drive, Job, OwnMaterial, Part, Probe, Quantity } from './job.ts';
 import { validateJob } from './parse-job.ts';
 import { copyPlainData } from './plain-data.ts';
@@ -35,6 +36,8 @@ export type Command =
   | { readonly do: 'reorder'; readonly id: string; readonly to: number }
   | { readonly do: 'name value'; readonly name: string; readonly value: Quantity }
   | { readonly do: 'unname value'; readonly name: string }
+  /** Another name for a named value, here and wherever it is used. */
+  | { readonly do: 'rename value'; readonly name: string; readonly to: string }
   /** Switches the field out of the plane and converts line current amplitudes between A and V. */
   | { readonly do: 'set section'; readonly section: Job['section'] }
   /** Another document (opened, dropped, example). */
@@ -66,6 +69,8 @@ function edit(job: Job, command: Command): Result<unknown> {
       return setAt(job, ['values', command.name], command.value);
     case 'unname value':
       return setAt(job, ['values', command.name], undefined);
+    case 'rename value':
+      return renameValue(job, command.name, command.to);
     case 'set section':
       return ok(setSection(job, command.section));
     case 'replace':

@@ -67,6 +67,8 @@ export function describeCommand(job: Job, command: Command): string {
       return `${Object.hasOwn(job.values, command.name) ? 'change' : 'name'} ${command.name}`;
     case 'unname value':
       return `remove the name ${command.name}`;
+    case 'rename value':
+      return `rename ${command.name} to ${command.to}`;
     case 'set section':
       return `turn the section to ${command.section}`;
     case 'replace':

@@ -23,3 +23,17 @@ test('a value that does not read is refused with the mend, and the job stays as 
   await expect(bench.brief.getByRole('button', { name: 'Value of w: 4 mm' })).toBeVisible();
   expect((await bench.export('The job as a file')).text).toBe(before);
 });
+
+test('a named value is renamed where it stands, and what uses it follows in one undo step', async ({ bench, page }) => {
+  await bench.waitForEnd();
+  const before = (await bench.export('The job as a file')).text;
+  await bench.brief.getByRole('button', { name: 'Name: w' }).click();
+  await page.keyboard.type('opening');
+  await page.keyboard.press('Enter');
+  await expect(bench.brief.getByRole('button', { name: 'Value of opening: 4 mm' })).toBeVisible();
+  const renamed = (await bench.export('The job as a file')).text;
+  expect(renamed).toContain('opening/2');
+  expect(renamed).not.toContain('w/2');
+  await page.getByRole('button', { name: 'undo' }).click();
+  expect((await bench.export('The job as a file')).text).toBe(before);
+});

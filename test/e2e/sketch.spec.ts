@@ -4,8 +4,7 @@ import { spawnSync } from 'node:child_process';
 import { mkdtempSync, readFileSync, writeFileSync } from 'node:fs';
 import { tmpdir } from 'node:os';
 import { join } from 'node:path';
-import type { Bench } from './bench.ts';
-import { expect, test } from './bench.ts';
+import { Bench, expect, test } from './bench.ts';
 
 /** A wall across the beam with a 10 mm slot in it, and a probe behind: by mouse, typed sizes, and the menu at the cursor. */
 async function sketchSlot(bench: Bench): Promise<void> {
@@ -159,4 +158,53 @@ test('an edit made a moment before the tab is closed is not lost', async ({ benc
   await bench.title.press('Enter');
   await page.reload();
   await expect(bench.title).toHaveValue('Typed at the last moment');
+});
+
+test('a second tab saves nothing while the first is open, and then offers what that held', async ({ bench, page, context }) => {
+  const isSaved = (of: Bench) => of.page.getByRole('status').filter({ hasText: /^saved$/ });
+  const name = async (of: Bench, title: string): Promise<void> => {
+    await of.title.fill(title);
+    await of.title.press('Enter');
+  };
+  await bench.waitForEnd();
+  await name(bench, 'In the first tab');
+  await expect(isSaved(bench)).toBeVisible();
+  const second = new Bench(await context.newPage());
+  await second.open();
+  await expect(second.page.getByRole('alert')).toContainText('open in another tab');
+  await name(second, 'In the second tab');
+  await page.reload();
+  await expect(bench.title).toHaveValue('In the first tab');
+  await name(bench, 'In the first tab again');
+  await expect(isSaved(bench)).toBeVisible();
+  await page.close();
+  await name(second, 'In the second tab again');
+  await expect(second.page.getByText('this one saves now')).toBeVisible();
+  await expect(isSaved(second)).toBeVisible();
+  await second.page.getByRole('button', { name: 'Open what it held' }).click();
+  await expect(second.title).toHaveValue('In the first tab again');
+  expect(second.complaints).toEqual([]);
+});
+
+test('a tool chosen by its command takes digits at once, and a corner is added and taken away at the cursor', async ({
+  bench,
+}) => {
+  const { page } = bench;
+  await bench.waitForEnd();
+  await bench.startEmptyJob();
+  await bench.command('Draw a wall');
+  for (const text of ['30', '20']) {
+    await page.keyboard.type(text);
+    await page.keyboard.press(text === '30' ? 'Tab' : 'Enter');
+  }
+  await bench.clickAt(90, 20);
+  await page.keyboard.press('Enter');
+  const points = async (): Promise<number> => (await savedJob(bench)).job.parts[0]!.points.length;
+  expect((await savedJob(bench)).job.parts[0]!.points.map(([x]) => Number.parseFloat(x))).toEqual([30, 90]);
+  await bench.clickAt(60, 20, 'right');
+  await page.getByRole('menuitem', { name: 'add a corner here' }).click();
+  expect(await points()).toBe(3);
+  await bench.clickAt(60, 20, 'right');
+  await page.getByRole('menuitem', { name: 'take this corner away' }).click();
+  expect(await points()).toBe(2);
 });

@@ -31,7 +31,7 @@ export function NamedValues() {
       <div className="named-values">
         {Object.entries(values).map(([name, text]) => (
           <span key={name} className="named-value num">
-            {name} ={' '}
+            <ValueName name={name} /> ={' '}
             <EditableValue
               text={text}
               label={`Value of ${name}`}
@@ -44,6 +44,19 @@ export function NamedValues() {
       </div>
       <SaidHere place="values" />
     </section>
+  );
+}
+
+/** The name itself: another one is taken over wherever it is used. */
+function ValueName({ name }: { readonly name: string }) {
+  return (
+    <EditableValue
+      text={name}
+      label="Name"
+      className="value-name"
+      commit={(text) => (text.trim() === name ? null : tryCommand({ do: 'rename value', name, to: text.trim() }))}
+      bail={() => undefined}
+    />
   );
 }
 

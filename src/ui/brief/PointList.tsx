@@ -1,7 +1,7 @@
 // Owns the corners of a part of many points, each editable where it stands.
 // Must not know what the points draw.
 import { useViewStore } from '../../app/view-store.ts';
-import type { Part } from '../../model/job.ts';
+import type { Part, Point } from '../../model/job.ts';
 import { setValue } from './editing.ts';
 import type { Path } from './path-text.ts';
 import { Action } from './ThingLine.tsx';
@@ -10,6 +10,13 @@ import { PointValue } from './values.tsx';
 /** A freehand stroke has hundreds of points, which no one types. */
 const MOST_LISTED = 60;
 const FEWEST: Readonly<Record<'wall' | 'polygon' | 'stroke', number>> = { wall: 2, polygon: 3, stroke: 1 };
+
+/** Half way to the next point; what is written stays as it is written. */
+function pointAfter(points: readonly Point[], k: number): Point {
+  const [a, b] = [points[k]!, points[(k + 1) % points.length]!];
+  const half = (n: 0 | 1): string => (a[n] === b[n] ? a[n] : `(${a[n]} + ${b[n]})/2`);
+  return [half(0), half(1)];
+}
 
 export function PointList({ part, index }: { readonly part: Part; readonly index: number }) {
   const selected = useViewStore((state) => state.selection.includes(part.id));
@@ -31,6 +38,11 @@ export function PointList({ part, index }: { readonly part: Part; readonly index
             words="×"
             disabled={fewest}
             onAct={() => void setValue(path, points.toSpliced(k, 1))}
+          />
+          <Action
+            label={`Add a point after point ${k + 1} of ${name}`}
+            words="+"
+            onAct={() => void setValue(path, points.toSpliced(k + 1, 0, pointAfter(points, k)))}
           />
         </span>
       ))}

@@ -32,7 +32,7 @@ export function describeCells({ cellsX, cellsY, dxMetres, dyMetres }: Estimate):
 export function describeCost({ cellsTotal, memoryBytes, dtSeconds, stepLimit, secondsAtMost }: Estimate): string {
   const step = formatQuantity(dtSeconds, 'time', 4);
   return (
-    `${writeCount(cellsTotal)} cells with the absorbers, ${writeBytes(memoryBytes)}; a step of ${step}, ` +
+    `${writeCount(cellsTotal)} cells with the absorbers, up to ${writeBytes(memoryBytes)}; a step of ${step}, ` +
     `at most ${writeCount(stepLimit)} of them in ${writeDuration(secondsAtMost)}`
   );
 }

@@ -11,7 +11,7 @@ export function describeCurrent(progress: RunProgress, hasRecord: boolean, stale
     case 'held':
       return `held at ${formatQuantity(progress.timeSeconds, 'time', 3)}`;
     case 'ready':
-      return hasRecord ? (stale ? 'of the job before the last edits' : 'from the run book') : 'not run yet';
+      return hasRecord ? (stale ? 'of the job before the last edits' : 'the readings are of the last run') : 'not run yet';
     case 'done':
       return stale ? 'of the job before the last edits' : (progress.stopReason ?? 'done');
   }

@@ -34,6 +34,7 @@ export function Sheet(): ReactElement {
       followSize(element, (width, height) => made.resize({ width, height }, window.devicePixelRatio)),
       followTheme(() => made.setPalette(readPalette(element))),
       registerSheetExporter(() => made.picture()),
+      followTool(() => element.focus()),
     ];
     setController(made);
     return () => {
@@ -100,6 +101,13 @@ function readPalette(element: Element): Palette {
   const style = getComputedStyle(element);
   const theme = document.documentElement.dataset['theme'] === 'dark' ? 'dark' : 'light';
   return makePalette((name) => style.getPropertyValue(name).trim(), theme);
+}
+
+/** A tool taken up anywhere, by a word of the Brief or a command, wants the keys: the next digits are a size. */
+function followTool(takenUp: () => void): () => void {
+  return useViewStore.subscribe(({ tool }, before) => {
+    if (tool !== before.tool && tool.kind !== 'select') requestAnimationFrame(takenUp);
+  });
 }
 
 /** Calls back with the size in CSS pixels now and on every change, of the zoom of the page too. */

@@ -4,11 +4,12 @@ import { ContextMenu } from 'radix-ui';
 import type { ReactElement, ReactNode } from 'react';
 import { useJobStore } from '../../app/job-store.ts';
 import { useViewStore, type Tool } from '../../app/view-store.ts';
-import type { PartKind } from '../../model/job.ts';
+import type { Part, PartKind } from '../../model/job.ts';
 import { findMaterial, listMaterialIds } from '../../model/materials/library.ts';
 import { PART_KINDS } from '../../model/parts/registry.ts';
 import type { SheetController } from './sheet-controller.ts';
 import { findPart, nameOf } from './things.ts';
+import { addCorner, dropCorner } from './tools/corners.ts';
 import { duplicate, removeSelected, reorder } from './tools/select-tool.ts';
 import { RECORD, type ToolAction, type ToolContext } from './tools/tool.ts';
 
@@ -126,6 +127,7 @@ function SelectionItems({ controller }: { controller: SheetController }): ReactE
           <Item keys="[" disabled={rank === 0} onSelect={act((context) => reorder(-1, context))}>
             send backward
           </Item>
+          <CornerItems part={part} controller={controller} />
           <Item onSelect={act(() => [leaveOut(rank, !part.leftOutOfReference)])}>
             {part.leftOutOfReference ? 'keep in the reference' : 'leave out of the reference'}
           </Item>
@@ -136,6 +138,18 @@ function SelectionItems({ controller }: { controller: SheetController }): ReactE
       </Item>
       <ContextMenu.Separator />
     </ContextMenu.Group>
+  );
+}
+
+/** Shown where the menu was opened on a side or a corner. */
+function CornerItems({ part, controller }: { part: Part; controller: SheetController }): ReactElement {
+  const drop = controller.atMenu((at, context) => dropCorner(part, at, context));
+  const add = drop === null ? controller.atMenu((at, context) => addCorner(part, at, context)) : null;
+  return (
+    <>
+      {drop === null ? null : <Item onSelect={() => controller.act(() => [drop])}>take this corner away</Item>}
+      {add === null ? null : <Item onSelect={() => controller.act(() => [add])}>add a corner here</Item>}
+    </>
   );
 }
 

@@ -67,7 +67,7 @@ function estimateWords(estimate: Estimate): readonly string[] {
   const megabytes = estimate.memoryBytes / 1e6;
   return [
     `${groupDigits(estimate.cellsTotal)} cells`,
-    `${megabytes < 10 ? megabytes.toFixed(1) : Math.round(megabytes)} MB`,
+    `up to ${megabytes < 10 ? megabytes.toFixed(1) : Math.round(megabytes)} MB`,
     `${groupDigits(estimate.stepLimit)} steps at most`,
     `${durationWords(estimate.secondsAtMost)} at most`,
   ];

@@ -182,6 +182,12 @@ export class SheetController {
     else if (!selection.includes(id)) select([id]);
   }
 
+  /** What the menu asks of the place where it stands; null before the sheet has been drawn. */
+  atMenu(ask: (at: XY, context: ToolContext) => ToolAction | null): ToolAction | null {
+    const context = this.#context();
+    return context === null ? null : ask(this.#menuPoint ?? this.#middle(), context);
+  }
+
   /** Takes a tool and sets its first point where the menu stood. */
   startAtMenu(tool: Tool): void {
     const at = this.#menuPoint ?? this.#middle();

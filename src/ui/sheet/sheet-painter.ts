@@ -3,10 +3,10 @@
 import type { Job, ResolvedJob, XY } from '../../model/job.ts';
 import { findMaterial } from '../../model/materials/library.ts';
 import type { Surface } from './layers/context.ts';
-import { drawDrives } from './layers/drives-layer.ts';
+import { driveBoxes, drawDrives } from './layers/drives-layer.ts';
 import { drawEdges, sheetBox } from './layers/edges-layer.ts';
 import { drawNames, drawParts } from './layers/parts-layer.ts';
-import { drawProbes } from './layers/probes-layer.ts';
+import { drawProbes, probeBoxes } from './layers/probes-layer.ts';
 import { drawRulers } from './layers/rulers-layer.ts';
 import { drawScaleStrip, type FieldScale, type LegendEntry } from './layers/scale-layer.ts';
 import { drawDimensions, drawHandles, drawMark, drawPreview, drawSnap, type PlacedDimension } from './layers/selection-layer.ts';
@@ -24,7 +24,7 @@ export function paintDrawing(surface: Surface, resolved: ResolvedJob): void {
   ghostOutside(surface, resolved);
   drawEdges(surface, resolved.sheet);
   drawDrives(surface, resolved.drives, sheetBox(resolved.sheet), resolved.section);
-  drawNames(surface, resolved.parts);
+  drawNames(surface, resolved.parts, [...driveBoxes(surface, resolved.drives), ...probeBoxes(surface, resolved.probes)]);
   drawProbes(surface, resolved.probes);
 }
 

@@ -4,6 +4,7 @@ import { Command } from 'cmdk';
 import { Dialog } from 'radix-ui';
 import { useMemo } from 'react';
 import type { Example } from '../../app/examples.ts';
+import { useViewStore } from '../../app/view-store.ts';
 import { listCommands } from './commands.ts';
 import type { BenchCommand } from './commands.ts';
 import { useDialogStore } from './dialog-store.ts';
@@ -33,7 +34,12 @@ export function CommandFinder({ examples }: { readonly examples: readonly Exampl
     <Dialog.Root open={open} onOpenChange={(on) => !on && close()}>
       <Dialog.Portal>
         <Dialog.Overlay className="dialog-shade" />
-        <Dialog.Content className="finder" aria-describedby={undefined}>
+        <Dialog.Content
+          className="finder"
+          aria-describedby={undefined}
+          // A tool chosen here has its keys on the sheet.
+          onCloseAutoFocus={(event) => useViewStore.getState().tool.kind !== 'select' && event.preventDefault()}
+        >
           <Dialog.Title className="hidden-visually">Find a command</Dialog.Title>
           <FinderList examples={examples} onDone={close} />
         </Dialog.Content>

@@ -140,6 +140,22 @@ describe('named values', () => {
     expect(Object.keys(apply(full, { do: 'name value', name: 'a', value: '1 in' }).values)).toEqual(['a', 'top', 'gap']);
   });
 
+  it('take another name wherever they are used, in one step, and words stay as they are', () => {
+    const titled = { ...full, title: 'a slot in a wall', notes: 'a and gap' };
+    const renamed = apply(titled, { do: 'rename value', name: 'a', to: 'broad' });
+    expect(Object.keys(renamed.values)).toEqual(['broad', 'top', 'gap']);
+    expect(renamed.values['gap']).toBe(full.values['gap']!.replace(/\ba\b/, 'broad'));
+    expect(JSON.stringify(renamed)).not.toMatch(/"[^"]*\ba\/2[^"]*"/);
+    expect([renamed.title, renamed.notes]).toEqual([titled.title, titled.notes]);
+    expect(apply(renamed, { do: 'rename value', name: 'broad', to: 'a' })).toEqual(titled);
+  });
+
+  it('cannot take a name that is taken, or that is none', () => {
+    expect(refusal(full, { do: 'rename value', name: 'a', to: 'gap' })).toMatchObject({ code: 'name', path: 'values.gap' });
+    expect(refusal(full, { do: 'rename value', name: 'a', to: '3x' })).toBeDefined();
+    expect(refusal(full, { do: 'rename value', name: 'nobody', to: 'b' })).toMatchObject({ code: 'name' });
+  });
+
   it('that would go round in a circle are refused', () => {
     expect(refusal(full, { do: 'name value', name: 'a', value: '4*gap' })).toMatchObject({ code: 'cycle' });
   });

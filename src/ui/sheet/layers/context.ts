@@ -98,3 +98,11 @@ export function haloText({ context, palette }: Surface, text: string, x: number,
   context.fillStyle = ink;
   context.fillText(text, x, y);
 }
+
+/** On the screen, pixels. */
+export interface ScreenBox {
+  readonly left: number;
+  readonly top: number;
+  readonly right: number;
+  readonly bottom: number;
+}

@@ -2,12 +2,13 @@
 // Must not know the DOM, stores, or how waves are launched.
 import type { ResolvedDrive, Section, XY } from '../../../model/job.ts';
 import { toScreen, type Box } from '../viewport.ts';
-import { haloText, SANS, strokeArrowHead, strokeSegment, type Surface } from './context.ts';
+import { haloText, SANS, strokeArrowHead, strokeSegment, type ScreenBox, type Surface } from './context.ts';
 
 /** The front stands this far into the sheet, as a fraction of the way the wave goes across it. */
 const FRONT_DEPTH = 0.07;
 
 const ARROW_PIXELS = 26;
+const NAME_FONT = `500 11px ${SANS}`;
 export const LINE_CURRENT_RADIUS_PIXELS = 8;
 
 /** The line on which the front of a plane wave is drawn: across the direction of travel, just inside the entering side. */
@@ -91,7 +92,7 @@ function drawLineCurrent(surface: Surface, drive: ResolvedDrive & { kind: 'line 
     strokeSegment(context, [x - arm, y - arm], [x + arm, y + arm]);
     strokeSegment(context, [x - arm, y + arm], [x + arm, y - arm]);
   }
-  context.font = `500 11px ${SANS}`;
+  context.font = NAME_FONT;
   context.textAlign = 'left';
   context.textBaseline = 'middle';
   haloText(surface, drive.name, x + radius + 7, y, palette.ink);
@@ -101,4 +102,16 @@ function disc({ context }: Surface, x: number, y: number, radius: number): void 
   context.beginPath();
   context.arc(x, y, radius, 0, 2 * Math.PI);
   context.fill();
+}
+
+/** Where line currents and their names stand on the screen. */
+export function driveBoxes({ context, view }: Surface, drives: readonly ResolvedDrive[]): ScreenBox[] {
+  context.font = NAME_FONT;
+  return drives.flatMap((drive) => {
+    if (drive.kind === 'plane wave') return [];
+    const [x, y] = toScreen(view, drive.at);
+    const reach = LINE_CURRENT_RADIUS_PIXELS + 3;
+    const right = x + LINE_CURRENT_RADIUS_PIXELS + 7 + context.measureText(drive.name).width;
+    return [{ left: x - reach, right, top: y - reach, bottom: y + reach }];
+  });
 }

@@ -1,9 +1,9 @@
 // Owns how parts look: drafting hatch for metal, violet-grey tint for dielectrics, outlines and names.
 // Must not know the DOM, stores, or tools.
-import type { Medium, Outline, ResolvedPart } from '../../../model/job.ts';
+import type { Medium, Outline, ResolvedPart, XY } from '../../../model/job.ts';
 import { partContains } from '../../../model/outline.ts';
 import { toScreen, toSheet, type Viewport } from '../viewport.ts';
-import { haloText, SANS, traceOutline, type LayerContext, type Surface } from './context.ts';
+import { haloText, SANS, traceOutline, type LayerContext, type ScreenBox, type Surface } from './context.ts';
 
 const HATCH_SPACING = 5;
 
@@ -81,13 +81,6 @@ function hatchClip(surface: Surface, outline: Outline): void {
   context.restore();
 }
 
-interface ScreenBox {
-  readonly left: number;
-  readonly top: number;
-  readonly right: number;
-  readonly bottom: number;
-}
-
 /** Lines x + y = const, HATCH_SPACING apart across. */
 function traceHatch(context: LayerContext, box: ScreenBox, anchor: number): void {
   const pitch = HATCH_SPACING * Math.SQRT2;
@@ -161,30 +154,43 @@ function strokePart(surface: Surface, part: ResolvedPart): void {
 
 const NAME_HEIGHT = 14;
 
-/** Names stand in the middle of parts that have room for them, else beside; one that would cover another is left out. */
-export function drawNames(surface: Surface, parts: readonly ResolvedPart[]): void {
+/**
+ * Names stand in the middle of parts that have room for them, else beside. Of several places the first that covers no other
+ * name and none of the boxes `taken` is used; a name without such a place is left out.
+ */
+export function drawNames(surface: Surface, parts: readonly ResolvedPart[], taken: readonly ScreenBox[]): void {
   const { context, palette } = surface;
-  const taken: ScreenBox[] = [];
+  const boxes = [...taken];
   context.font = `500 11px ${SANS}`;
   context.textBaseline = 'middle';
   context.textAlign = 'left';
   for (const part of parts) {
-    const label = placeName(surface, part, context.measureText(part.name).width);
-    if (label === null || taken.some((other) => overlaps(other, label))) continue;
-    taken.push(label);
-    haloText(surface, part.name, label.left, (label.top + label.bottom) / 2, palette.ink);
+    const places = namePlaces(surface, part, context.measureText(part.name).width);
+    const place = places.find((box) => !boxes.some((other) => overlaps(other, box)));
+    if (place === undefined) continue;
+    boxes.push(place);
+    haloText(surface, part.name, place.left, (place.top + place.bottom) / 2, palette.ink);
   }
 }
 
-function placeName({ view, size }: Surface, part: ResolvedPart, width: number): ScreenBox | null {
+/** Best first. */
+function namePlaces({ view, size }: Surface, part: ResolvedPart, width: number): ScreenBox[] {
   const seen = visibleBox(view, part.outline, size);
-  if (seen === null) return null;
+  if (seen === null) return [];
   const [middleX, middleY] = [(seen.left + seen.right) / 2, (seen.top + seen.bottom) / 2];
+  const wide = seen.right - seen.left - width;
   // Above the middle first, where the handle of a selected disc does not stand.
-  const row = part.medium.metal ? undefined : [middleY - 15, middleY].find((y) => roomFor(view, part.outline, middleX, y, width));
-  if (row !== undefined) return labelBox(middleX - width / 2, row, width);
-  const beside = Math.min(seen.right + 7, size.width - width - 8);
-  return labelBox(beside, Math.min(seen.bottom - 10, Math.max(seen.top + 12, 40)), width);
+  const inside = part.medium.metal
+    ? []
+    : [0, 0.3, -0.3].flatMap((aside) => [-15, 0, 15].map((down): XY => [middleX + aside * wide, middleY + down]));
+  const row = Math.min(seen.bottom - 10, Math.max(seen.top + 12, 40));
+  return [
+    ...inside.filter(([x, y]) => roomFor(view, part.outline, x, y, width)).map(([x, y]) => labelBox(x - width / 2, y, width)),
+    labelBox(Math.min(seen.right + 7, size.width - width - 8), row, width),
+    labelBox(Math.max(8, seen.left - 7 - width), row, width),
+    labelBox(Math.max(8, middleX - width / 2), Math.max(40, seen.top - 10), width),
+    labelBox(Math.max(8, middleX - width / 2), seen.bottom + 10, width),
+  ];
 }
 
 function roomFor(view: Viewport, outline: Outline, x: number, y: number, width: number): boolean {

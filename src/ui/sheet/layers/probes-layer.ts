@@ -2,7 +2,7 @@
 // Must not know the DOM, stores, or what probes read.
 import type { ResolvedJob } from '../../../model/job.ts';
 import { toScreen } from '../viewport.ts';
-import { SANS, strokeSegment, type Surface } from './context.ts';
+import { SANS, strokeSegment, type ScreenBox, type Surface } from './context.ts';
 
 const POLE_PIXELS = 28;
 const FLAG_HEIGHT = 14;
@@ -11,6 +11,14 @@ export function drawProbes(surface: Surface, probes: ResolvedJob['probes']): voi
   probes.forEach((probe, index) => {
     const [x, y] = toScreen(surface.view, probe.at);
     drawFlag(surface, x, y, String(index + 1));
+  });
+}
+
+/** Where the flags stand on the screen. */
+export function probeBoxes({ view }: Surface, probes: ResolvedJob['probes']): ScreenBox[] {
+  return probes.map((probe) => {
+    const [x, y] = toScreen(view, probe.at);
+    return { left: x - 4, right: x + 24, top: y - POLE_PIXELS - 2, bottom: y + 4 };
   });
 }
 

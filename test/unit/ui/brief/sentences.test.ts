@@ -111,7 +111,7 @@ test('a folded part still says what it is and how big', () => {
 test('the cost of a run is told in the units of its size', () => {
   expect(describeCells(ESTIMATE)).toBe('180 by 90 cells of 1 mm');
   expect(describeCells({ ...ESTIMATE, dyMetres: 5e-4 })).toBe('180 by 90 cells of 1 mm by 500 \u00b5m');
-  expect(describeCost(ESTIMATE)).toContain('23\u202f256 cells with the absorbers, 1 MB; a step of 2 ps');
+  expect(describeCost(ESTIMATE)).toContain('23\u202f256 cells with the absorbers, up to 1 MB; a step of 2 ps');
   expect([writeBytes(5120), writeBytes(4.87e6), writeBytes(1.2e9)]).toEqual(['5.1 kB', '4.9 MB', '1.2 GB']);
   expect([0.04, 1.4, 75, 600, 9000].map(writeDuration)).toEqual(['0.1 s', '1 s', '75 s', '10 min', '2.5 h']);
   expect([999, 12848, 1234567].map(writeCount)).toEqual(['999', '12\u202f848', '1\u202f234\u202f567']);

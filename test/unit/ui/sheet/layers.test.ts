@@ -2,10 +2,10 @@
 import { describe, expect, test } from 'vitest';
 import type { ResolvedDrive } from '../../../../src/model/job.ts';
 import type { LayerContext, Surface } from '../../../../src/ui/sheet/layers/context.ts';
-import { drawDrives, planeWaveFront } from '../../../../src/ui/sheet/layers/drives-layer.ts';
+import { driveBoxes, drawDrives, planeWaveFront } from '../../../../src/ui/sheet/layers/drives-layer.ts';
 import { drawEdges, edgeWords, sheetBox } from '../../../../src/ui/sheet/layers/edges-layer.ts';
 import { drawField } from '../../../../src/ui/sheet/layers/field-layer.ts';
-import { drawParts, tintOpacity } from '../../../../src/ui/sheet/layers/parts-layer.ts';
+import { drawNames, drawParts, tintOpacity } from '../../../../src/ui/sheet/layers/parts-layer.ts';
 import { drawProbes } from '../../../../src/ui/sheet/layers/probes-layer.ts';
 import { drawRulers } from '../../../../src/ui/sheet/layers/rulers-layer.ts';
 import { drawScaleStrip, legendLabel, scaleWords } from '../../../../src/ui/sheet/layers/scale-layer.ts';
@@ -56,6 +56,29 @@ function surface(): { surface: Surface; calls: Call[] } {
 function texts(calls: readonly Call[]): readonly unknown[] {
   return calls.filter((call) => call.name === 'fillText').map((call) => call.args[0]);
 }
+
+describe('names', () => {
+  test('the name of a part keeps clear of the name of a line current that stands in it', () => {
+    const { surface: to, calls } = surface();
+    const [x, y] = [0.06, 0.05];
+    const source: ResolvedDrive = {
+      id: 'source',
+      name: 'Source',
+      kind: 'line current',
+      at: [x, y],
+      amplitude: 1,
+      waveform: { kind: 'band pulse' },
+    };
+    const corners = [-0.01, 0.15, 0.15, -0.01].map((dx, k): [number, number] => [x + dx, y + (k < 2 ? -0.01 : 0.01)]);
+    const medium = { ...RESOLVED.sheet.background, epsilonRelative: 3 };
+    const [box] = driveBoxes(to, [source]);
+    drawNames(to, [{ ...RESOLVED.parts[0]!, name: 'Long straight', medium, outline: [corners] }], [box!]);
+    const drawn = calls.find((call) => call.name === 'fillText')!;
+    const [left, middle] = [Number(drawn.args[1]), Number(drawn.args[2])];
+    const right = left + 6 * 'Long straight'.length;
+    expect(left > box!.right || right < box!.left || middle - 7 > box!.bottom || middle + 7 < box!.top).toBe(true);
+  });
+});
 
 describe('parts', () => {
   test('metal is hatched, a dielectric is not', () => {
