@@ -81,3 +81,35 @@ test('a kept run is renamed, laid over the next one, and removed', async ({ benc
   await book.getByRole('button', { name: 'Remove Slot of 4 mm' }).click();
   await expect(bench.readings.getByRole('columnheader', { name: 'Slot of 4 mm' })).toBeHidden();
 });
+
+test('a cursor is dragged along the curve, and a piece zoomed into stays in sight when the theme changes', async ({
+  bench,
+  page,
+}) => {
+  await bench.waitForEnd();
+  const over = bench.readings.locator('.u-over').first();
+  const box = (await over.boundingBox())!;
+  const middle = box.y + box.height / 2;
+  const frequency = async (): Promise<number> => {
+    const text = await bench.readings.locator('.cursor-words').first().innerText();
+    return Number.parseFloat(text);
+  };
+  await page.mouse.click(box.x + box.width * 0.25, middle);
+  const first = await frequency();
+  await page.mouse.move(box.x + box.width * 0.25, middle);
+  await page.mouse.down();
+  await page.mouse.move(box.x + box.width * 0.6, middle, { steps: 4 });
+  await page.mouse.up();
+  const dragged = await frequency();
+  expect(dragged).toBeGreaterThan(first + 1);
+
+  await page.mouse.move(box.x + box.width * 0.9, middle);
+  for (let turn = 0; turn < 4; turn++) await page.mouse.wheel(0, -300);
+  const left = { x: box.x + 12, y: middle };
+  await page.mouse.click(left.x, left.y);
+  const zoomed = await frequency();
+  expect(zoomed).toBeGreaterThan(first);
+  await page.getByRole('button', { name: 'Turn to dark' }).click();
+  await page.mouse.click(left.x, left.y);
+  expect(await frequency()).toBeCloseTo(zoomed, 1);
+});

@@ -30,14 +30,17 @@ export class PlotController {
     this.content = content;
     const read = (): PlotContent => this.content ?? content;
     if (this.plot === null || before === null || shapeOf(before) !== shapeOf(content)) {
+      // Another theme, scale or run beside it: a person who has zoomed in goes on looking at the same piece.
+      const sight = before?.xUnit === content.xUnit ? zoomOf(this.plot) : null;
       this.take();
       this.plot = makePlot(this.element, read);
       this.release = listen(this.plot, read);
+      if (sight !== null) this.plot.setScale('x', sight);
       return;
     }
     if (before.x !== content.x || before.columns !== content.columns) {
       // A person who has zoomed in keeps what is in sight while more comes in.
-      const zoomed = isZoomed(this.plot);
+      const zoomed = zoomOf(this.plot) !== null;
       this.plot.setData(dataOf(content), !zoomed);
       if (zoomed) this.plot.redraw();
     } else if (before.cursors !== content.cursors || before.marks !== content.marks || before.floor !== content.floor) {
@@ -67,12 +70,25 @@ function dataOf({ x, columns }: PlotContent): uPlot.AlignedData {
   return [x as number[], ...(columns as (number | null)[][])];
 }
 
-function isZoomed(plot: uPlot): boolean {
-  const x = plot.data[0];
-  const { min, max } = plot.scales['x'] ?? {};
-  if (x.length < 2 || min === undefined || min === null || max === undefined || max === null) return false;
+/** The piece of the x axis in sight, or null when all of it is. */
+function zoomOf(plot: uPlot | null): { min: number; max: number } | null {
+  const x = plot?.data[0] ?? [];
+  const { min, max } = plot?.scales['x'] ?? {};
+  if (x.length < 2 || min === undefined || min === null || max === undefined || max === null) return null;
   const span = x[x.length - 1]! - x[0]!;
-  return min > x[0]! + 1e-6 * span || max < x[x.length - 1]! - 1e-6 * span;
+  return min > x[0]! + 1e-6 * span || max < x[x.length - 1]! - 1e-6 * span ? { min, max } : null;
+}
+
+const GRAB_PIXELS = 6;
+
+/** The cursor under the pointer, by its number. */
+function cursorUnder(plot: uPlot, { cursors }: PlotContent, event: MouseEvent): 0 | 1 | null {
+  const at = event.clientX - plot.over.getBoundingClientRect().left;
+  const isNear = (which: 0 | 1): boolean => {
+    const x = cursors[which];
+    return x !== null && x !== undefined && Math.abs(plot.valToPos(x, 'x') - at) <= GRAB_PIXELS;
+  };
+  return isNear(1) ? 1 : isNear(0) ? 0 : null;
 }
 
 function makePlot(element: HTMLElement, read: Read): uPlot {
@@ -94,7 +110,13 @@ function makePlot(element: HTMLElement, read: Read): uPlot {
     height: Math.max(1, element.clientHeight),
     legend: { show: false },
     padding: [15, 26, 0, 4],
-    cursor: { drag: { x: true, y: false, dist: 6 }, points: { show: false }, y: false },
+    cursor: {
+      drag: { x: true, y: false, dist: 6 },
+      points: { show: false },
+      y: false,
+      // A press on a cursor takes hold of it: no piece is chosen to zoom into.
+      bind: { mousedown: (plot, _, handler) => (event) => (cursorUnder(plot, read(), event) === null ? handler(event) : null) },
+    },
     scales: {
       x: { time: false, ...(logarithmic ? LOGARITHMIC : {}), range: (_, min, max) => [min, max] },
       y: { range: (_, min, max) => paddedRange(min, max) },
@@ -164,20 +186,31 @@ function logarithmicTicks(min: number, max: number): number[] {
   return ticks;
 }
 
-/** Click places cursor 1, Shift-click cursor 2; wheel zooms at the pointer, double click (uPlot's own) shows all. */
+/**
+ * Click places cursor 1, Shift-click cursor 2, and either can be dragged; wheel zooms at the pointer, double click (uPlot's
+ * own) shows all.
+ */
 function listen(plot: uPlot, read: Read): () => void {
   let downAt = 0;
-  const place = (event: MouseEvent): void => {
+  let held: 0 | 1 | null = null;
+  const place = (event: MouseEvent, which: 0 | 1): void => {
     const { x, onCursor } = read();
     if (x.length === 0) return;
     const value = plot.posToVal(event.clientX - plot.over.getBoundingClientRect().left, 'x');
-    onCursor(event.shiftKey ? 1 : 0, x[nearestIndex(x, value)]!);
+    onCursor(which, x[nearestIndex(x, value)]!);
   };
   const down = (event: MouseEvent): void => {
     downAt = event.clientX;
+    held = event.button === 0 ? cursorUnder(plot, read(), event) : null;
+  };
+  const move = (event: MouseEvent): void => {
+    if (held !== null) place(event, held);
+    else if (event.target === plot.over) plot.over.style.cursor = cursorUnder(plot, read(), event) === null ? '' : 'ew-resize';
   };
   const up = (event: MouseEvent): void => {
-    if (event.button === 0 && Math.abs(event.clientX - downAt) < 5) place(event);
+    const clicked = held === null && event.target === plot.over && event.button === 0 && Math.abs(event.clientX - downAt) < 5;
+    held = null;
+    if (clicked) place(event, event.shiftKey ? 1 : 0);
   };
   const wheel = (event: WheelEvent): void => {
     event.preventDefault();
@@ -191,11 +224,13 @@ function listen(plot: uPlot, read: Read): () => void {
     if (to > from) plot.setScale('x', { min: from, max: to });
   };
   plot.over.addEventListener('mousedown', down);
-  plot.over.addEventListener('mouseup', up);
+  window.addEventListener('mousemove', move);
+  window.addEventListener('mouseup', up);
   plot.over.addEventListener('wheel', wheel, { passive: false });
   return () => {
     plot.over.removeEventListener('mousedown', down);
-    plot.over.removeEventListener('mouseup', up);
+    window.removeEventListener('mousemove', move);
+    window.removeEventListener('mouseup', up);
     plot.over.removeEventListener('wheel', wheel);
   };
 }
