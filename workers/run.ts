@@ -5,8 +5,8 @@ import { fail, ok } from '../src/base/result.ts';
 import { SYNC_READY } from '../src/engine/layout.ts';
 import { feedInto } from '../src/engine/plane-wave.ts';
 import type { RunPlan } from '../src/engine/plan.ts';
-import { RunningDft } from '../src/engine/spectrum.ts';
-import { waveformAt } from '../src/engine/waveform.ts';
+import { PhasorTable, RunningDft } from '../src/engine/spectrum.ts';
+import { waveformAt, waveformSilence } from '../src/engine/waveform.ts';
 import { kernelImports } from './kernel-imports.mjs';
 import type { ThreadPool } from './thread-pool.ts';
 
@@ -24,7 +24,7 @@ const BASE = PAGE;
  * A run at t = 0. With a pool and a plan for several threads its memory is shared, and `kernel` must be the build for that.
  * Fails when the memory cannot be had.
  */
-export async function openRun(plan: RunPlan, kernel: WebAssembly.Module, pool: ThreadPool | null = null): Promise<Result<Run>> {
+export function openRun(plan: RunPlan, kernel: WebAssembly.Module, pool: ThreadPool | null = null): Result<Run> {
   const shared = pool !== null && plan.threads > 1;
   const pages = 1 + Math.ceil(plan.imageBytes / PAGE);
   let memory: WebAssembly.Memory;
@@ -38,7 +38,8 @@ export async function openRun(plan: RunPlan, kernel: WebAssembly.Module, pool: T
       hint: 'Close other pages, or take larger cells.',
     });
   }
-  const instance = await WebAssembly.instantiate(kernel, { env: kernelImports(memory) });
+  // At once: the asynchronous way waits some 20 ms for the compiler's own tasks.
+  const instance = new WebAssembly.Instance(kernel, { env: kernelImports(memory) });
   if (shared) pool.serve({ kernel, memory, base: BASE }, plan.threads - 1);
   return ok(new Run(plan, memory.buffer, instance.exports as unknown as KernelExports));
 }
@@ -53,6 +54,7 @@ export class Run {
   private traces: Float32Array<ArrayBuffer>[];
   private readonly kernel: KernelExports;
   private readonly buffer: ArrayBufferLike;
+  private readonly phasors: PhasorTable;
   private dft: RunningDft;
   private driveDft: RunningDft;
 
@@ -62,8 +64,12 @@ export class Run {
     this.buffer = buffer;
     this.image = new Float32Array(buffer, BASE, Math.floor(plan.imageBytes / 4));
     this.traces = [];
-    this.dft = this.makeDft();
-    this.driveDft = this.makeDriveDft();
+    this.phasors = new PhasorTable(plan.frequenciesHertz, plan.dtSeconds);
+    this.dft = new RunningDft(
+      this.phasors,
+      plan.probeIds.flatMap(() => [0, 0.5, 0.5]),
+    );
+    this.driveDft = new RunningDft(this.phasors, [0]);
     this.rewind();
   }
 
@@ -75,8 +81,11 @@ export class Run {
     new Uint8Array(buffer, BASE + plan.fixedOffset, plan.fixed.byteLength).set(new Uint8Array(plan.fixed));
     this.step = 0;
     this.traces = Array.from({ length: 3 * plan.probeIds.length }, () => new Float32Array(1024));
-    this.dft = this.makeDft();
-    this.driveDft = this.makeDriveDft();
+    this.dft = new RunningDft(
+      this.phasors,
+      plan.probeIds.flatMap(() => [0, 0.5, 0.5]),
+    );
+    this.driveDft = new RunningDft(this.phasors, [0]);
   }
 
   /** Does `steps` steps (at most the plan's slice) and records them. */
@@ -136,16 +145,6 @@ export class Run {
     return null;
   }
 
-  private makeDft(): RunningDft {
-    const { plan } = this;
-    const offsets = plan.probeIds.flatMap(() => [0, 0.5, 0.5]);
-    return new RunningDft(plan.frequenciesHertz, plan.dtSeconds, offsets);
-  }
-
-  private makeDriveDft(): RunningDft {
-    return new RunningDft(this.plan.frequenciesHertz, this.plan.dtSeconds, [0]);
-  }
-
   private record(steps: number): void {
     const { plan } = this;
     const channels = 3 * plan.probeIds.length;
@@ -162,11 +161,16 @@ export class Run {
       }
     }
     this.dft.add(block, first, steps);
-    if (plan.driveWaveform !== null) {
-      const drive = new Float32Array(steps);
-      for (let s = 0; s < steps; s++) drive[s] = waveformAt(plan.driveWaveform, (first + s) * plan.dtSeconds);
-      this.driveDft.add(drive, first, steps);
-    }
+    this.recordDrive(first, steps);
+  }
+
+  private recordDrive(first: number, steps: number): void {
+    const { driveWaveform, dtSeconds } = this.plan;
+    if (driveWaveform === null) return;
+    const last = Math.min(first + steps - 1, Math.floor(waveformSilence(driveWaveform) / dtSeconds));
+    if (last < first) return;
+    const drive = Float32Array.from({ length: last - first + 1 }, (_, s) => waveformAt(driveWaveform, (first + s) * dtSeconds));
+    this.driveDft.add(drive, first, drive.length);
   }
 
   private roomFor(channel: number, lastStep: number): Float32Array<ArrayBuffer> {

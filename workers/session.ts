@@ -94,7 +94,7 @@ class Session implements SessionApi {
     if (!resolved.ok) return resolved;
     const plan = makePlan(resolved.value, role, this.host.pool === null ? 1 : threads);
     if (!plan.ok) return plan;
-    const run = await openRun(plan.value, await this.kernelFor(plan.value.threads > 1), this.host.pool);
+    const run = openRun(plan.value, await this.kernelFor(plan.value.threads > 1), this.host.pool);
     if (!run.ok) return run;
     this.run = run.value;
     this.role = role;

@@ -8,6 +8,7 @@ import type { Job, ResolvedJob } from '../model/job.ts';
 import { wantsReference } from '../model/reference.ts';
 import { makeReferenceKey } from './run-question.ts';
 import type { SolverSeat } from './solver-seat.ts';
+import { untilDone } from './until-done.ts';
 
 export type ReferenceState = 'none' | 'running' | 'done' | 'failed';
 
@@ -102,12 +103,12 @@ export class ReferenceRun {
       if (turn !== this.turn) return null;
       if (!opened.ok) return opened;
       await api.start();
-      for (;;) {
-        const { progress } = await api.poll({ view: null, maxWidth: 0, maxHeight: 0, sinceStep: Infinity });
-        if (turn !== this.turn) return null;
-        if (progress.state === 'done') break;
-        await this.wait(LOOK_MILLISECONDS);
-      }
+      const ended = await untilDone(
+        api,
+        () => this.wait(LOOK_MILLISECONDS),
+        () => turn !== this.turn,
+      );
+      if (!ended) return null;
       const record = await api.record();
       return turn === this.turn ? (record.ok ? ok(record.value) : record) : null;
     } catch (error) {

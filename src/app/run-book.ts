@@ -1,9 +1,10 @@
 // Owns the list of kept runs: keeping, naming, laying over, taking out and putting back.
 // Must not know React components, workers, or where kept runs are stored.
 import { describeChange } from './describe-change.ts';
+import { useJobStore } from './job-store.ts';
 import { tell } from './notice-store.ts';
 import type { KeptRun } from './run-store.ts';
-import { useRunStore } from './run-store.ts';
+import { NO_PROGRESS, useRunStore } from './run-store.ts';
 
 function freeId(kept: readonly KeptRun[]): string {
   const taken = new Set(kept.map((run) => run.id));
@@ -80,4 +81,19 @@ export function describeKept(kept: readonly KeptRun[], id: string): string | nul
   const at = kept.findIndex((run) => run.id === id);
   const [before, run] = [kept[at - 1], kept[at]];
   return before === undefined || run === undefined ? null : (describeChange(before.job, run.job) ?? 'the same job');
+}
+
+/** Puts the readings of a kept run on show. */
+export function showKept(run: KeptRun): void {
+  useRunStore.setState({
+    progress: NO_PROGRESS,
+    main: run.main,
+    reference: run.reference,
+    referenceState: run.reference === null ? 'none' : 'done',
+    answeredJob: useJobStore.getState().job,
+    components: run.main.components,
+    liveTraces: [],
+    liveCount: 0,
+    stale: false,
+  });
 }

@@ -1,20 +1,20 @@
 // Owns the run shown: opens the job in a solver, follows it, streams what comes out to the stores and the frame channel.
 // Must not know React components, canvases, or how the solver works.
 import type { RunProgress } from '../../workers/protocol.ts';
-import type { AppError } from '../base/result.ts';
-import { makeEstimate } from '../engine/estimate.ts';
-import type { Estimate } from '../engine/estimate.ts';
+import { makeEstimate, type Estimate } from '../engine/estimate.ts';
 import { NOMINAL_SPEED } from '../engine/plan.ts';
 import type { Job, ResolvedJob } from '../model/job.ts';
 import { componentsOf, fieldInSection } from './field-choice.ts';
 import { frameLimits, latestFrame, publishFrame } from './frame-channel.ts';
 import { GrowingTraces } from './growing-traces.ts';
 import { useJobStore } from './job-store.ts';
+import { Outlook } from './outlook.ts';
+import { showKept } from './run-book.ts';
 import { ReferenceRun } from './reference-run.ts';
 import { asksTheSame, standsOnSameSheet } from './run-question.ts';
 import { NO_PROGRESS, useRunStore } from './run-store.ts';
-import type { SpawnedSolver } from './solver-seat.ts';
-import { SolverSeat } from './solver-seat.ts';
+import { SolverSeat, type SpawnedSolver } from './solver-seat.ts';
+import { untilDone } from './until-done.ts';
 import { useViewStore } from './view-store.ts';
 
 /** What the controller needs of its surroundings. */
@@ -30,6 +30,11 @@ export interface RunSurroundings {
   threads(): number;
 }
 
+/** What takes longer is run again only when asked for. */
+const FOLLOW_SECONDS = 0.6;
+/** An answer that takes longer than this is given up for that of a newer job. */
+const PATIENCE_MILLISECONDS = 300;
+const UNSEEN_LOOK_MILLISECONDS = 6;
 /** Progress and samples reach the store at most ten times a second. */
 const PUBLISH_MILLISECONDS = 100;
 
@@ -44,6 +49,7 @@ export class RunController {
   private readonly around: RunSurroundings;
   private readonly seat: SolverSeat;
   private readonly reference: ReferenceRun;
+  private readonly outlook: Outlook;
   private open: OpenRun | null = null;
   private growing = new GrowingTraces();
   private pace = Infinity;
@@ -55,12 +61,13 @@ export class RunController {
   private poll: Promise<unknown> | null = null;
   /** Solvers given up so far: a call to one of them may fail without being news. */
   private givenUp = 0;
-  private jobErrors: readonly AppError[] = [];
-  private runErrors: readonly AppError[] = [];
-  private estimating = false;
+  private following = false;
+  /** The run that is open shows nothing of itself until its answer is there. */
+  private unseen = false;
 
   constructor(around: RunSurroundings) {
     this.around = around;
+    this.outlook = new Outlook(() => around.nextFrame());
     this.seat = new SolverSeat(() => around.spawn(around.threads()));
     const wait = (milliseconds: number): Promise<void> => around.wait(milliseconds);
     const seat = new SolverSeat(() => around.spawn(halfOf(around.threads())));
@@ -76,10 +83,11 @@ export class RunController {
   attach(): () => void {
     const endJob = useJobStore.subscribe((state, before) => {
       if (state.job === before.job) return;
-      this.runErrors = [];
+      this.outlook.tell([]);
       this.jobChanged();
     });
     const endView = useViewStore.subscribe((state, before) => {
+      if (state.follows && !before.follows) void this.followEdits();
       if (state.field !== before.field || state.fieldPlace !== before.fieldPlace) void this.refresh();
     });
     this.jobChanged();
@@ -160,33 +168,23 @@ export class RunController {
     const run = useRunStore.getState().kept.find((kept) => kept.id === id);
     if (run === undefined) return;
     const replaced = useJobStore.getState().dispatch({ do: 'replace', job: run.job });
-    if (!replaced.ok) return this.complain(replaced.errors);
+    if (!replaced.ok) return this.outlook.tell(replaced.errors);
     this.giveUp();
     publishFrame(null);
-    useRunStore.setState({
-      progress: NO_PROGRESS,
-      main: run.main,
-      reference: run.reference,
-      referenceState: run.reference === null ? 'none' : 'done',
-      answeredJob: useJobStore.getState().job,
-      components: run.main.components,
-      liveTraces: [],
-      liveCount: 0,
-      stale: false,
-    });
+    showKept(run);
   }
 
   /** Opens the job as it stands, at t = 0. Null when it cannot be run or another run has taken over. */
-  private async openJob(): Promise<number | null> {
+  private async openJob(unseen = false): Promise<number | null> {
     const turn = ++this.turn;
+    this.unseen = unseen;
     const { job, resolved } = useJobStore.getState();
-    this.runErrors = [];
-    this.publishErrors();
+    this.outlook.tell([]);
     if (!resolved.ok) return null;
     const estimate = makeEstimate(resolved.value, this.speed);
     if (!estimate.ok) {
       this.open = null;
-      this.complain(estimate.errors);
+      this.outlook.tell(estimate.errors);
       return null;
     }
     const alone = !this.reference.isNeeded(job, resolved.value, estimate.value);
@@ -195,13 +193,14 @@ export class RunController {
     if (turn !== this.turn) return null;
     if (!opened.ok) {
       this.open = null;
-      this.complain(opened.errors);
+      this.outlook.tell(opened.errors);
       return null;
     }
-    await this.seat.api.setPace(this.pace);
+    await this.seat.api.setPace(unseen ? Infinity : this.pace);
     if (turn !== this.turn) return null;
     this.open = { job, resolved: resolved.value, estimate: estimate.value };
     this.growing = new GrowingTraces();
+    if (unseen) return turn;
     useRunStore.setState({
       progress: { ...NO_PROGRESS, stepLimit: opened.value.stepLimit },
       components: componentsOf(job.section),
@@ -232,11 +231,56 @@ export class RunController {
     }
   }
 
+  /** Solves a small job again when it has been edited, and again while it goes on being: the curve follows the hand. */
+  private async followEdits(): Promise<void> {
+    if (this.following) return;
+    this.following = true;
+    await this.around.nextFrame();
+    await this.guarded(async () => {
+      while (this.mayFollow()) {
+        const turn = await this.openJob(true);
+        if (turn === null || !(await this.solveUnseen(turn))) break;
+      }
+    });
+    this.following = false;
+  }
+
+  /** Only behind a finished run: one that is watched, held or stopped by hand is the person's. */
+  private mayFollow(): boolean {
+    const { stale, progress, main } = useRunStore.getState();
+    const { resolved } = useJobStore.getState();
+    if (!useViewStore.getState().follows || !stale || progress.state !== 'done' || !resolved.ok) return false;
+    if (main === null || main.stopReason === 'stopped by the person') return false;
+    const estimate = makeEstimate(resolved.value, this.speed);
+    return estimate.ok && estimate.value.cellsTotal * main.steps < FOLLOW_SECONDS * this.speed * 1e6;
+  }
+
+  /** False when the run was taken over or broke. */
+  private async solveUnseen(turn: number): Promise<boolean> {
+    const { open, around, seat } = this;
+    if (open === null) return false;
+    await seat.api.start();
+    const referenced = this.reference.follow(open.job, open.resolved, open.estimate);
+    const began = around.now();
+    const isOutdated = (): boolean =>
+      around.now() - began > PATIENCE_MILLISECONDS && !asksTheSame(open.job, useJobStore.getState().job);
+    const isGivenUp = ({ state }: RunProgress): boolean => turn !== this.turn || state === 'held' || isOutdated();
+    const ended = await untilDone(seat.api, () => around.wait(UNSEEN_LOOK_MILLISECONDS), isGivenUp);
+    if (!ended) return turn === this.turn && isOutdated();
+    await referenced;
+    if (turn !== this.turn) return false;
+    this.unseen = false;
+    useRunStore.setState({ components: componentsOf(open.job.section) });
+    await this.look();
+    await this.finish(turn);
+    return true;
+  }
+
   /** One poll, after the one under way: there are never two. Null when nothing is open any more. */
   private async look(): Promise<RunProgress | null> {
     while (this.poll !== null) await this.poll.catch(() => undefined);
     const { open, growing } = this;
-    if (open === null) return null;
+    if (open === null || this.unseen) return null;
     const { field, fieldPlace } = useViewStore.getState();
     const { width, height } = frameLimits();
     const view = fieldPlace === 'off' ? null : fieldInSection(field, open.job.section);
@@ -261,9 +305,10 @@ export class RunController {
     const open = this.open;
     const record = await this.seat.api.record();
     if (turn !== this.turn || open === null) return;
-    if (!record.ok) return this.complain(record.errors);
+    if (!record.ok) return this.outlook.tell(record.errors);
     if (record.value.megaCellsPerSecond > 0) this.speed = record.value.megaCellsPerSecond;
-    useRunStore.setState({ main: record.value, answeredJob: open.job, reference: this.reference.record });
+    const { state, record: reference } = this.reference;
+    useRunStore.setState({ main: record.value, answeredJob: open.job, reference, referenceState: state });
     this.jobChanged();
   }
 
@@ -278,6 +323,7 @@ export class RunController {
   /** The reference belongs with the record it divides: it waits until that is there. */
   private publishReference(): void {
     const { state, record, errors } = this.reference;
+    if (this.unseen && state !== 'failed') return;
     const answered = useRunStore.getState().answeredJob === this.open?.job;
     if (answered && state === 'done') {
       // A run kept before its reference had ended gets it too.
@@ -289,7 +335,7 @@ export class RunController {
     } else {
       useRunStore.setState({ referenceState: state });
     }
-    if (state === 'failed') this.complain(errors);
+    if (state === 'failed') this.outlook.tell(errors);
   }
 
   private jobChanged(): void {
@@ -301,7 +347,8 @@ export class RunController {
     const fitting = fieldInSection(field, job.section);
     if (fitting !== field) setField(fitting);
     this.fitFrame();
-    if (!this.estimating) void this.estimateSoon();
+    void this.outlook.estimateSoon(() => this.speed);
+    if (stale) void this.followEdits();
   }
 
   /** A field computed on another sheet would be drawn at false places. */
@@ -317,29 +364,6 @@ export class RunController {
     if (fits && latestFrame() === null) void this.refresh();
   }
 
-  /** Once a frame is enough while a wall is dragged. */
-  private async estimateSoon(): Promise<void> {
-    this.estimating = true;
-    await this.around.nextFrame();
-    this.estimating = false;
-    const { resolved } = useJobStore.getState();
-    const estimate = resolved.ok ? makeEstimate(resolved.value, this.speed) : resolved;
-    this.jobErrors = estimate.ok ? [] : estimate.errors;
-    useRunStore.setState({ estimate: estimate.ok ? estimate.value : null });
-    this.publishErrors();
-  }
-
-  private complain(errors: readonly AppError[]): void {
-    this.runErrors = errors;
-    this.publishErrors();
-  }
-
-  /** What the estimate already says of the job is not said twice. */
-  private publishErrors(): void {
-    const said = new Set(this.jobErrors.map((error) => error.message));
-    useRunStore.setState({ errors: [...this.jobErrors, ...this.runErrors.filter((error) => !said.has(error.message))] });
-  }
-
   /** The solver may die at any call: that is told, and nothing else is lost. */
   private async guarded(work: () => Promise<void>): Promise<void> {
     const givenUp = this.givenUp;
@@ -349,7 +373,7 @@ export class RunController {
       if (givenUp !== this.givenUp) return;
       this.giveUp();
       useRunStore.setState((state) => ({ progress: { ...state.progress, state: 'ready', secondsLeft: 0 } }));
-      this.complain([
+      this.outlook.tell([
         {
           code: 'solver',
           message: error instanceof Error ? error.message : String(error),

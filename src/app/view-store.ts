@@ -23,6 +23,8 @@ export interface ViewState {
   readonly decibelSpan: number;
   /** Material new parts get. */
   readonly paint: string;
+  /** Small jobs are solved again with every edit. */
+  readonly follows: boolean;
   setTheme(theme: 'light' | 'dark'): void;
   select(ids: readonly string[]): void;
   hover(id: string | null): void;
@@ -32,6 +34,7 @@ export interface ViewState {
   setFieldScale(scale: number | null): void;
   setDecibelSpan(span: number): void;
   setPaint(materialId: string): void;
+  setFollows(follows: boolean): void;
 }
 
 const THEME_KEY = 'guidewall theme';
@@ -57,6 +60,7 @@ export const useViewStore = create<ViewState>()((set) => ({
   fieldScale: null,
   decibelSpan: 60,
   paint: 'perfect-metal',
+  follows: true,
   setTheme: (theme) => {
     globalThis.localStorage?.setItem(THEME_KEY, theme);
     set({ theme });
@@ -70,4 +74,5 @@ export const useViewStore = create<ViewState>()((set) => ({
   setFieldScale: (fieldScale) => set({ fieldScale }),
   setDecibelSpan: (decibelSpan) => set({ decibelSpan }),
   setPaint: (paint) => set({ paint }),
+  setFollows: (follows) => set({ follows }),
 }));

@@ -51,8 +51,20 @@ function membersOf(run: SpectrumRun, name: string): number[] {
   );
 }
 
-/** Null when the run has no such probe or component. */
+/** A run is read by plots, tables and files, and a reference by every run after it: each reading is made once. */
+const amplitudes = new WeakMap<SpectrumRun, Map<string, Amplitude | null>>();
+
+/** Null when the run has no such probe or component. A run must not be changed once it has been read. */
 export function amplitudeAt(run: SpectrumRun, probeId: string, name: string): Amplitude | null {
+  let known = amplitudes.get(run);
+  if (known === undefined) amplitudes.set(run, (known = new Map()));
+  const key = `${name} ${probeId}`;
+  let found = known.get(key);
+  if (found === undefined) known.set(key, (found = makeAmplitude(run, probeId, name)));
+  return found;
+}
+
+function makeAmplitude(run: SpectrumRun, probeId: string, name: string): Amplitude | null {
   const spectrum = run.spectra.find((one) => one.probeId === probeId);
   const trace = run.traces.find((one) => one.probeId === probeId);
   const members = membersOf(run, name);

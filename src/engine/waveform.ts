@@ -75,6 +75,11 @@ export function waveformAt(waveform: Waveform, t: number): number {
   }
 }
 
+/** After this it is nothing, or nothing that single precision would show; Infinity when it never is. */
+export function waveformSilence(waveform: Waveform): number {
+  return waveform.kind === 'band pulse' || waveform.kind === 'samples' ? waveformEnd(waveform) : Infinity;
+}
+
 /** When the drive has played out, in seconds: Infinity for a continuous wave. Decay is not judged before. */
 export function waveformEnd(waveform: Waveform): number {
   switch (waveform.kind) {

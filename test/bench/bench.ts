@@ -40,7 +40,7 @@ function add(name: string, value: number, unit: string, against: Row | null): Ro
 async function open(job: ResolvedJob, many = 1): Promise<Run> {
   const plan = makePlan(job, 'main', many);
   if (!plan.ok) throw new Error(plan.errors[0].message);
-  const run = await (plan.value.threads > 1 ? openRun(plan.value, sharedKernel!, pool) : openRun(plan.value, kernel!));
+  const run = plan.value.threads > 1 ? openRun(plan.value, sharedKernel!, pool) : openRun(plan.value, kernel!);
   if (!run.ok) throw new Error(run.errors[0].message);
   while (run.value.threads < plan.value.threads) await new Promise((resolve) => setTimeout(resolve, 5));
   return run.value;

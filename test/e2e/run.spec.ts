@@ -52,3 +52,23 @@ test('turning E from across the slot to along it changes the question, the field
   await expect(bench.runStrip.getByRole('radio', { name: 'Ez', exact: true })).toBeVisible();
   await bench.run();
 });
+
+test('after a finished run the curve follows edits, and ends where a fresh run ends', async ({ bench, page }) => {
+  await bench.waitForEnd();
+  const readings = async (): Promise<string> => (await bench.readings.locator('tbody').allInnerTexts()).join(' ');
+  const before = await readings();
+  await bench.brief.getByRole('button', { name: 'Value of w: 4 mm' }).click();
+  await page.keyboard.type('9 mm');
+  await page.keyboard.press('Enter');
+  await expect.poll(readings).not.toBe(before);
+  await bench.waitForEnd();
+  const followed = await readings();
+  await bench.run();
+  expect(await readings()).toBe(followed);
+  await bench.runStrip.getByLabel('follow edits').setChecked(false, { force: true });
+  await bench.brief.getByRole('button', { name: /^Value of w:/ }).click();
+  await page.keyboard.type('14 mm');
+  await page.keyboard.press('Enter');
+  await expect(bench.runStrip.getByText('the job has changed since')).toBeVisible();
+  expect(await readings()).toBe(followed);
+});

@@ -31,7 +31,7 @@ export async function openSheet(draft: unknown): Promise<SteppedSheet> {
   const job = unwrap(resolveJob(unwrap(parseJob(draft))));
   const plan = unwrap(makePlan(job, 'main'));
   const kernel = await WebAssembly.compile(await readFile(new URL('../../workers/kernel/kernel.wasm', import.meta.url)));
-  const run = unwrap(await openRun(plan, kernel));
+  const run = unwrap(openRun(plan, kernel));
   const regions = paintParts(job.parts, job.sheet);
   const coefficients = makeCoefficients(unwrap(makeGrid(job)), regions, job.sheet.background, job.band);
   const { fields } = plan;

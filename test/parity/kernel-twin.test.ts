@@ -25,7 +25,7 @@ async function differences(job: ResolvedJob, block: number): Promise<{ differ: n
   const plan = makePlan(job, 'main');
   if (!plan.ok) throw new Error(plan.errors[0].message);
   plan.value.header[L.H_BLOCK] = block;
-  const opened = await openRun(plan.value, kernel);
+  const opened = openRun(plan.value, kernel);
   if (!opened.ok) throw new Error(opened.errors[0].message);
   const run = opened.value;
   const { header, fixed, fixedOffset, imageBytes, sourceTableOffset, slice, sources, feeds, fields, recordOffset } = plan.value;

@@ -21,7 +21,7 @@ async function open(job: ResolvedJob, threads: number): Promise<Run> {
   const plan = makePlan(job, 'main', threads);
   if (!plan.ok) throw new Error(plan.errors[0].message);
   const shared = plan.value.threads > 1;
-  const run = await openRun(plan.value, shared ? kernels.shared : kernels.single, shared ? pool : null);
+  const run = openRun(plan.value, shared ? kernels.shared : kernels.single, shared ? pool : null);
   if (!run.ok) throw new Error(run.errors[0].message);
   opened.push(run.value);
   return run.value;

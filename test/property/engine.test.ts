@@ -16,7 +16,7 @@ const kernel = new WebAssembly.Module(readFileSync(new URL('../../workers/kernel
 async function open(job: ResolvedJob): Promise<Run> {
   const plan = makePlan(job, 'main');
   if (!plan.ok) throw new Error(plan.errors[0].message);
-  const run = await openRun(plan.value, kernel);
+  const run = openRun(plan.value, kernel);
   if (!run.ok) throw new Error(run.errors[0].message);
   return run.value;
 }
@@ -122,7 +122,7 @@ describe('a sheet of any parts', () => {
             expect(plan.errors[0].code).toBe('drive in metal');
             return;
           }
-          const opened = await openRun(plan.value, kernel);
+          const opened = openRun(plan.value, kernel);
           if (!opened.ok) throw new Error(opened.errors[0].message);
           const run = opened.value;
           advance(run, Math.ceil(plan.value.drivenSeconds / plan.value.dtSeconds) + 8);

@@ -99,6 +99,20 @@ function PaceChoice(): ReactElement {
   );
 }
 
+function FollowChoice(): ReactElement {
+  const follows = useViewStore((state) => state.follows);
+  const setFollows = useViewStore((state) => state.setFollows);
+  return (
+    <label
+      className="plain-button run-strip-choice"
+      title="A small job is solved again with every edit: the curve follows the hand. Larger ones wait for Run."
+    >
+      <input type="checkbox" checked={follows} onChange={(event) => setFollows(event.target.checked)} />
+      follow edits
+    </label>
+  );
+}
+
 function RunProgressLine(): ReactElement {
   const progress = useRunStore((run) => run.progress);
   const estimate = useRunStore((run) => run.estimate);
@@ -115,6 +129,7 @@ function RunProgressLine(): ReactElement {
       <div className="run-strip-under">
         <progress className="run-strip-bar" aria-label="Progress of the run" max={1} value={share} />
         <PaceChoice />
+        <FollowChoice />
       </div>
     </div>
   );

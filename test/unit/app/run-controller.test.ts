@@ -1,4 +1,4 @@
-import { afterEach, beforeEach, expect, test } from 'vitest';
+import { afterEach, beforeEach, describe, expect, test } from 'vitest';
 import { latestFrame, publishFrame } from '../../../src/app/frame-channel.ts';
 import { useJobStore } from '../../../src/app/job-store.ts';
 import { keepRun } from '../../../src/app/run-book.ts';
@@ -36,6 +36,7 @@ function makeBench(solvers: FakeSolver[]) {
 let detach = (): void => undefined;
 
 beforeEach(() => {
+  useViewStore.getState().setFollows(false);
   useJobStore.getState().dispatch({ do: 'replace', job: makeSmallJob() }, { kind: 'skip' });
   useRunStore.setState({
     progress: NO_PROGRESS,
@@ -327,4 +328,64 @@ test('reopening a kept run puts its job and its records back, and can be undone'
   useJobStore.getState().undo();
   expect(useJobStore.getState().job.values['w']).toBe('5 mm');
   expect(run().stale).toBe(true);
+});
+
+describe('when small jobs follow edits', () => {
+  const nudge = (): void => {
+    useJobStore.getState().dispatch({ do: 'move', ids: ['wall-1'], dxMetres: 0.001, dyMetres: 0 });
+  };
+  const until = async (test: () => boolean): Promise<void> => {
+    for (let k = 0; k < 500 && !test(); k += 1) await turn();
+    expect(test()).toBe(true);
+  };
+
+  test('an edit after a finished run is answered by itself, and nothing of the run shows before its end', async () => {
+    const solver = new FakeSolver(40);
+    const { controller } = makeBench([solver, new FakeSolver(20)]);
+    await controller.run();
+    await settle();
+    const before = run().main;
+    useViewStore.getState().setFollows(true);
+    const states = new Set<string>();
+    const end = useRunStore.subscribe(({ progress }) => states.add(progress.state));
+    nudge();
+    expect(run().stale).toBe(true);
+    await until(() => run().main !== before);
+    end();
+    expect([...states]).toEqual(['done']);
+    expect(run().stale).toBe(false);
+    expect(run().answeredJob).toBe(useJobStore.getState().job);
+  });
+
+  test('of many edits in a row the last is answered, with far fewer runs than edits', async () => {
+    const solver = new FakeSolver(40);
+    const { controller } = makeBench([solver, new FakeSolver(20)]);
+    await controller.run();
+    await settle();
+    useViewStore.getState().setFollows(true);
+    for (let k = 0; k < 60; k += 1) {
+      nudge();
+      if (k % 3 === 0) await turn();
+    }
+    await until(() => run().answeredJob === useJobStore.getState().job && !run().stale);
+    const runs = solver.calls.filter((call) => call === 'open main').length;
+    expect(runs).toBeGreaterThan(1);
+    expect(runs).toBeLessThan(30);
+  });
+
+  test('a held run and one stopped by hand wait for the person', async () => {
+    const solver = new FakeSolver(4000);
+    const { controller } = makeBench([solver, new FakeSolver(20)]);
+    useViewStore.getState().setFollows(true);
+    const going = controller.run();
+    await turn();
+    await controller.hold();
+    await going;
+    nudge();
+    await settle();
+    await controller.stop();
+    nudge();
+    await settle();
+    expect(solver.calls.filter((call) => call === 'open main')).toHaveLength(1);
+  });
 });
