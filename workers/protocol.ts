@@ -11,7 +11,7 @@ export type FieldView = FieldComponent | '|E|' | '|H|';
 
 export type RunRole = 'main' | 'reference';
 
-export type StopReason = 'decayed' | 'time limit' | 'stopped by the person' | 'not finite' | 'growing';
+export type StopReason = 'decayed' | 'time limit' | 'stopped by the person' | 'not finite' | 'growing' | 'broken';
 
 /** Instantaneous field over the sheet (absorbers not included), row-major, bottom row first, V/m or A/m. */
 export interface FieldFrame {
@@ -39,7 +39,7 @@ export interface RunProgress {
   readonly threads: number;
   readonly secondsLeft: number;
   readonly stopReason: StopReason | null;
-  /** Set when stopReason is 'not finite' or 'growing': step, place and likely cause in words. */
+  /** Set when stopReason is 'not finite', 'growing' or 'broken': step, place and likely cause in words. */
   readonly trouble: string | null;
 }
 

@@ -105,7 +105,7 @@ class Session implements SessionApi {
   async start(): Promise<void> {
     if (this.run === null || this.state === 'running' || this.state === 'done') return;
     this.state = 'running';
-    void this.loop(this.run, ++this.generation);
+    void this.guardedLoop(this.run, ++this.generation);
   }
 
   async hold(): Promise<void> {
@@ -200,6 +200,18 @@ class Session implements SessionApi {
   private finish(reason: StopReason): void {
     this.stopReason = reason;
     this.state = 'done';
+  }
+
+  /** Nobody waits for the loop: what breaks it is told by the progress. */
+  private async guardedLoop(run: Run, generation: number): Promise<void> {
+    try {
+      await this.loop(run, generation);
+    } catch (error) {
+      if (generation !== this.generation) return;
+      const reason = error instanceof Error ? error.message : String(error);
+      this.trouble = `The solver broke at step ${run.step} (${reason}). Run again; take fewer threads or cells if it happens again.`;
+      this.finish('broken');
+    }
   }
 
   /** Steps in slices until the run ends or another command takes over. */

@@ -55,6 +55,7 @@ export class ReferenceRun {
     if (turn !== this.turn || result === null) return;
     if (result.ok && result.value.trouble !== null) {
       this.job = null;
+      if (result.value.stopReason === 'broken') this.seat.clear();
       this.errors = [{ code: 'not finite', message: `The reference run broke: ${result.value.trouble}` }];
       return this.settle('failed', null);
     }

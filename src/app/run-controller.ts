@@ -309,6 +309,7 @@ export class RunController {
     if (record.value.megaCellsPerSecond > 0) this.speed = record.value.megaCellsPerSecond;
     const { state, record: reference } = this.reference;
     useRunStore.setState({ main: record.value, answeredJob: open.job, reference, referenceState: state });
+    if (record.value.stopReason === 'broken') this.seat.clear();
     this.jobChanged();
   }
 

@@ -42,6 +42,7 @@ const STOP_WORDS: Record<StopReason, string> = {
   'stopped by the person': 'stopped by hand',
   'not finite': 'stopped: the field is no longer finite',
   growing: 'stopped: the energy rises again',
+  broken: 'stopped: the solver broke',
 };
 
 /** First the time, then why it ended, then the rest in falling order of interest: a narrow strip cuts the end off. */

@@ -1,7 +1,8 @@
-import { describe, expect, test } from 'vitest';
+import { describe, expect, test, vi } from 'vitest';
 import type { Job } from '../../../src/model/job.ts';
 import { parseJob } from '../../../src/model/parse-job.ts';
 import type { RunRecord, SessionApi } from '../../../workers/protocol.ts';
+import { Run } from '../../../workers/run.ts';
 import { runToEnd } from '../../../workers/run-to-end.ts';
 import { makeNodeSession } from '../../../workers/session.node.ts';
 
@@ -162,4 +163,15 @@ test('two threads give the record that one gives, held, stepped and resumed on t
     expect([...re]).toEqual([...one.value.spectra[0]!.components[k]!.re]);
     expect([...im]).toEqual([...one.value.spectra[0]!.components[k]!.im]);
   });
+});
+
+test('a kernel that breaks ends the run and says so', async () => {
+  const advance = vi.spyOn(Run.prototype, 'advance').mockImplementation(() => {
+    throw new Error('unreachable');
+  });
+  const result = await runToEnd(makeNodeSession(), job(), 'main');
+  advance.mockRestore();
+  if (!result.ok) throw new Error(result.errors[0].message);
+  expect(result.value.stopReason).toBe('broken');
+  expect(result.value.trouble).toContain('unreachable');
 });

@@ -593,6 +593,8 @@ function passBlocks(base: usize, steps: i32, firstBlock: i64, thread: i32, threa
 
 const SPINS = 2000;
 const NAP_MILLISECONDS = 0.05;
+// Ten seconds or more of waiting for a thread that works on the same slice: it is gone, and the run with it.
+const MOST_NAPS = 200_000;
 const LONG_MILLISECONDS = 1e9;
 
 // Wait while the int32 at `address` holds `value`, and end such waits: see workers/kernel-imports.mjs.
@@ -608,6 +610,7 @@ function waitFor(address: usize, value: i64): void {
       const seen = atomic.load<i64>(address);
       if (seen >= value) return;
       if (spins > SPINS) nap(address, <i32>seen, NAP_MILLISECONDS);
+      if (spins > SPINS + MOST_NAPS) unreachable();
     }
   }
 }
@@ -634,6 +637,7 @@ export function advance(base: usize, steps: i32): void {
         const ended = atomic.load<i32>(SYNC_ENDED);
         if (ended == threads - 1) break;
         if (spins > SPINS) nap(SYNC_ENDED, ended, NAP_MILLISECONDS);
+        if (spins > SPINS + MOST_NAPS) unreachable();
       }
     } else {
       passBlocks(base, steps, firstBlock, 0, 1);
