@@ -34,6 +34,8 @@ export interface SessionHost {
 
 /** Time between looks at the messages. */
 const SLICE_MILLISECONDS = 8;
+/** A block may take this many times as long as half a slice. */
+const MOST_SLICES = 25;
 /** The energy is looked at when the step is a multiple of this, however the run was sliced: so a job always ends at the same step. */
 const ENERGY_EVERY = 256;
 /** Energy may not rise again after the drives have ended; this much above its lowest is no ripple. */
@@ -302,10 +304,13 @@ class Session implements SessionApi {
   }
 }
 
-/** About `steps`, in whole blocks for every thread where that is not far off: a row is cheaper the more steps pass it at once. */
+/**
+ * About `steps`, in whole blocks for every thread, for a row is cheaper the more steps pass it at once; single steps only where
+ * a block would keep messages waiting many slices long.
+ */
 function chunkOf(run: Run, steps: number): number {
   const whole = BLOCK_STEPS * run.threads;
-  const chunk = steps < whole / 4 ? Math.max(1, Math.round(steps)) : whole * Math.max(1, Math.round(steps / whole));
+  const chunk = whole > MOST_SLICES * steps ? Math.max(1, Math.round(steps)) : whole * Math.max(1, Math.round(steps / whole));
   return Math.min(run.plan.slice, chunk);
 }
 

@@ -7,7 +7,7 @@ import { RunController } from './run-controller.ts';
 import type { RunActions } from './run-store.ts';
 
 /** On a machine of many cores one is left to the page. */
-function threadsOfMachine(): number {
+export function threadsOfMachine(): number {
   const cores = navigator.hardwareConcurrency;
   return Math.min(MOST_THREADS, cores > 2 ? cores - 1 : cores);
 }

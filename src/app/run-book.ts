@@ -1,5 +1,6 @@
 // Owns the list of kept runs: keeping, naming, laying over, taking out and putting back.
 // Must not know React components, workers, or where kept runs are stored.
+import type { RunRecord } from '../../workers/protocol.ts';
 import { describeChange } from './describe-change.ts';
 import { useJobStore } from './job-store.ts';
 import { tell } from './notice-store.ts';
@@ -96,4 +97,12 @@ export function showKept(run: KeptRun): void {
     liveCount: 0,
     stale: false,
   });
+}
+
+/** Puts a reference beside the run on show; that run, kept before its reference had ended, gets it too. */
+export function showReference(reference: RunRecord | null): void {
+  useRunStore.setState(({ main, kept }) => ({
+    reference,
+    kept: kept.map((run) => (run.main === main && run.reference === null ? { ...run, reference } : run)),
+  }));
 }

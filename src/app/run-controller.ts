@@ -1,6 +1,6 @@
 // Owns the run shown: opens the job in a solver, follows it, streams what comes out to the stores and the frame channel.
 // Must not know React components, canvases, or how the solver works.
-import type { RunProgress } from '../../workers/protocol.ts';
+import type { RunProgress, SessionApi } from '../../workers/protocol.ts';
 import { makeEstimate, type Estimate } from '../engine/estimate.ts';
 import { NOMINAL_SPEED } from '../engine/plan.ts';
 import type { Job, ResolvedJob } from '../model/job.ts';
@@ -9,7 +9,7 @@ import { frameLimits, latestFrame, publishFrame } from './frame-channel.ts';
 import { GrowingTraces } from './growing-traces.ts';
 import { useJobStore } from './job-store.ts';
 import { Outlook } from './outlook.ts';
-import { showKept } from './run-book.ts';
+import { showKept, showReference } from './run-book.ts';
 import { ReferenceRun } from './reference-run.ts';
 import { asksTheSame, standsOnSameSheet } from './run-question.ts';
 import { NO_PROGRESS, useRunStore } from './run-store.ts';
@@ -70,10 +70,10 @@ export class RunController {
     this.outlook = new Outlook(() => around.nextFrame());
     this.seat = new SolverSeat(() => around.spawn(around.threads()));
     const wait = (milliseconds: number): Promise<void> => around.wait(milliseconds);
-    const seat = new SolverSeat(() => around.spawn(halfOf(around.threads())));
+    const seat = new SolverSeat(() => around.spawn(eachOfTwo(around.threads())));
     this.reference = new ReferenceRun(
       seat,
-      () => halfOf(around.threads()),
+      () => eachOfTwo(around.threads()),
       wait,
       () => this.publishReference(),
     );
@@ -164,6 +164,15 @@ export class RunController {
     });
   }
 
+  /** The solver for other work; null while a run needs it. The next run opens its job anew. */
+  lendSolver(): SessionApi | null {
+    const { state } = useRunStore.getState().progress;
+    if (state === 'running' || state === 'held') return null;
+    this.turn += 1;
+    this.open = null;
+    return this.seat.api;
+  }
+
   reopenKept(id: string): void {
     const run = useRunStore.getState().kept.find((kept) => kept.id === id);
     if (run === undefined) return;
@@ -189,7 +198,7 @@ export class RunController {
     }
     const alone = !this.reference.isNeeded(job, resolved.value, estimate.value);
     const threads = this.around.threads();
-    const opened = await this.seat.api.open(job, 'main', alone ? threads : halfOf(threads));
+    const opened = await this.seat.api.open(job, 'main', alone ? threads : eachOfTwo(threads));
     if (turn !== this.turn) return null;
     if (!opened.ok) {
       this.open = null;
@@ -326,16 +335,8 @@ export class RunController {
     const { state, record, errors } = this.reference;
     if (this.unseen && state !== 'failed') return;
     const answered = useRunStore.getState().answeredJob === this.open?.job;
-    if (answered && state === 'done') {
-      // A run kept before its reference had ended gets it too.
-      useRunStore.setState(({ main, kept }) => ({
-        referenceState: state,
-        reference: record,
-        kept: kept.map((run) => (run.main === main && run.reference === null ? { ...run, reference: record } : run)),
-      }));
-    } else {
-      useRunStore.setState({ referenceState: state });
-    }
+    useRunStore.setState({ referenceState: state });
+    if (answered && state === 'done') showReference(record);
     if (state === 'failed') this.outlook.tell(errors);
   }
 
@@ -394,7 +395,6 @@ export class RunController {
   }
 }
 
-/** What each of two runs gets that go side by side. */
-function halfOf(threads: number): number {
+function eachOfTwo(threads: number): number {
   return Math.max(1, Math.floor(threads / 2));
 }

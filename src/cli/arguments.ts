@@ -19,7 +19,8 @@ export type Invocation =
       readonly threads: Threads;
     }
   | { readonly command: 'check'; readonly jobFile: string }
-  | { readonly command: 'speed'; readonly cells: number; readonly seconds: number; readonly threads: Threads }
+  /** `cells` null: the usual sizes. */
+  | { readonly command: 'speed'; readonly cells: number | null; readonly seconds: number; readonly threads: Threads }
   | { readonly command: 'help'; readonly text: string }
   | { readonly command: 'version' }
   | { readonly command: 'misused'; readonly message: string };
@@ -78,11 +79,11 @@ function parseSpeed(words: readonly string[]): Invocation {
   const read = readOptions(words, { cells: { type: 'string' }, seconds: { type: 'string' }, threads: { type: 'string' } });
   if ('trouble' in read) return misused(read.trouble, 'speed');
   if (read.files.length > 0) return misused(`speed takes no file, and "${read.files[0]}" is given.`, 'speed');
-  const cells = Number(read.values['cells'] ?? 1024);
-  if (!Number.isInteger(cells) || cells < 64 || cells > LARGEST_SPEED_SHEET) {
+  const cells = read.values['cells'] === undefined ? null : Number(read.values['cells']);
+  if (cells !== null && (!Number.isInteger(cells) || cells < 64 || cells > LARGEST_SPEED_SHEET)) {
     return misused(`--cells ${String(read.values['cells'])}: give a whole number from 64 to ${LARGEST_SPEED_SHEET}.`, 'speed');
   }
-  const seconds = Number(read.values['seconds'] ?? 3);
+  const seconds = Number(read.values['seconds'] ?? 1);
   if (!(seconds >= 0.1 && seconds <= 600)) {
     return misused(`--seconds ${String(read.values['seconds'])}: give a number from 0.1 to 600.`, 'speed');
   }

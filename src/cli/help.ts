@@ -42,10 +42,10 @@ Exit code: 0 the job can be run; 1 it cannot: each error names the place in the 
 
   speed: `guidewall speed [--cells N] [--seconds S] [--threads N]
 
-Steps an empty square sheet with absorbing edges, one line current and one probe, and prints million cell updates a second.
+Steps empty square sheets with absorbing edges, one line current and one probe, and prints million cell updates a second.
 
-  --cells N     cells along each side, absorbers included: 64 to 8192 (default 1024)
-  --seconds S   time to measure for: 0.1 to 600 (default 3)
+  --cells N     cells along each side, absorbers included: 64 to 8192 (default: several sizes, on one thread and on all)
+  --seconds S   time to measure each for: 0.1 to 600 (default 1)
   --threads N   threads that work on it: 1 to 8 (default: the cores there are)
   --help        this text`,
 };

@@ -72,3 +72,14 @@ test('after a finished run the curve follows edits, and ends where a fresh run e
   await expect(bench.runStrip.getByText('the job has changed since')).toBeVisible();
   expect(await readings()).toBe(followed);
 });
+
+test('the speed of the machine is measured on a page of its own, and the job runs on after it', async ({ bench, page }) => {
+  await bench.waitForEnd();
+  await bench.command('Speed of this machine');
+  const rows = page.getByRole('dialog').getByRole('row');
+  await expect(page.getByText(/^Measured\./)).toBeVisible({ timeout: 30_000 });
+  expect(await rows.count()).toBeGreaterThanOrEqual(5);
+  await expect(rows.nth(1)).toContainText(/cell\/s/);
+  await page.getByRole('button', { name: 'Close' }).click();
+  await bench.run();
+});

@@ -3,12 +3,14 @@
 import type { Example } from '../../app/examples.ts';
 import { Cautions } from './Cautions.tsx';
 import { CommandFinder } from './CommandFinder.tsx';
+import { MachineSpeed } from './MachineSpeed.tsx';
 
 export function Dialogs({ examples }: { readonly examples: readonly Example[] }) {
   return (
     <>
       <CommandFinder examples={examples} />
       <Cautions />
+      <MachineSpeed />
     </>
   );
 }

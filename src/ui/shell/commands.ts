@@ -161,6 +161,12 @@ function lookCommands(): readonly BenchCommand[] {
     },
     {
       group: 'Help',
+      label: 'Speed of this machine',
+      also: ['benchmark', 'throughput', 'threads', 'fast', 'slow'],
+      run: () => useDialogStore.getState().show('speed'),
+    },
+    {
+      group: 'Help',
       label: 'Limits and cautions',
       also: ['about', 'safety', 'validity', 'help', 'disclaimer'],
       run: () => useDialogStore.getState().show('cautions'),

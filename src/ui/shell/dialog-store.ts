@@ -2,7 +2,7 @@
 // Must not know what the dialogs hold.
 import { create } from 'zustand';
 
-export type DialogName = 'commands' | 'cautions';
+export type DialogName = 'commands' | 'cautions' | 'speed';
 
 interface DialogState {
   readonly open: DialogName | null;

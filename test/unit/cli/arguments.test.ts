@@ -55,8 +55,8 @@ describe('threads', () => {
 });
 
 describe('speed', () => {
-  test('measures 1024 cells a side for three seconds unless told otherwise', () => {
-    expect(parseCommandLine(['speed'])).toEqual({ command: 'speed', cells: 1024, seconds: 3, threads: 'all' });
+  test('measures several sizes for a second each unless told otherwise', () => {
+    expect(parseCommandLine(['speed'])).toEqual({ command: 'speed', cells: null, seconds: 1, threads: 'all' });
     expect(parseCommandLine(['speed', '--cells', '256', '--seconds', '0.5'])).toEqual({
       command: 'speed',
       cells: 256,

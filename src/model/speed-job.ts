@@ -1,7 +1,7 @@
 // Owns the standard sheet on which throughput is measured.
 // Must not know how it is measured.
-import type { Job } from '../model/job.ts';
-import { makeEmptyJob } from '../model/new-job.ts';
+import type { Job } from './job.ts';
+import { makeEmptyJob } from './new-job.ts';
 
 const ABSORBER_CELLS = 10;
 
