@@ -41,20 +41,18 @@ export function measureCoverage(regions: readonly Region[], xs: Float64Array, ys
 
   const rows: CoverageRow[] = [{ columns: [], area: [], carry: [] }];
   const classOfRow = new Int32Array(rowCount);
-  const known = new Map<string, number>();
+  // Rows are told apart first by the half cells they touch, in whole numbers, then by what they hold there.
+  const known = new Map<number, number[]>();
   for (let row = 0; row < rowCount; row++) {
-    const content = regions.map((_, k) => sortedRow(cells[k]!.get(row)));
-    if (content.every((list) => list.length === 0)) continue;
-    const key = content.map((list) => list.map(([c, [a, w]]) => `${c}:${a.toFixed(12)}:${w.toFixed(12)}`).join()).join('|');
-    let rowClass = known.get(key);
+    const content = readRow(cells.map((ofRegion) => ofRegion.get(row)));
+    if (content === null) continue;
+    const place = placeOf(content);
+    const alike = known.get(place) ?? [];
+    let rowClass = alike.find((one) => isSame(rows[one]!, content));
     if (rowClass === undefined) {
       rowClass = rows.length;
-      known.set(key, rowClass);
-      rows.push({
-        columns: content.map((list) => Int32Array.from(list, ([c]) => c)),
-        area: content.map((list) => Float64Array.from(list, ([, [a]]) => a)),
-        carry: content.map((list) => Float64Array.from(list, ([, [, w]]) => w)),
-      });
+      rows.push(content);
+      known.set(place, [...alike, rowClass]);
     }
     classOfRow[row] = rowClass;
   }
@@ -85,8 +83,37 @@ function clampFraction(value: number): number {
   return value < 0 ? 0 : value > 1 ? 1 : value;
 }
 
-function sortedRow(row: Map<number, [number, number]> | undefined): [number, [number, number]][] {
-  return row === undefined ? [] : [...row].sort((a, b) => a[0] - b[0]);
+/** Null when no region touches the row. */
+function readRow(lists: readonly (Map<number, [number, number]> | undefined)[]): CoverageRow | null {
+  if (lists.every((list) => list === undefined || list.size === 0)) return null;
+  const columns = lists.map((list) => Int32Array.from(list?.keys() ?? []).sort());
+  const pick = (which: 0 | 1): Float64Array[] =>
+    columns.map((places, k) => Float64Array.from(places, (column) => lists[k]!.get(column)![which]));
+  return { columns, area: pick(0), carry: pick(1) };
+}
+
+function placeOf({ columns }: CoverageRow): number {
+  let place = 17;
+  for (const places of columns) {
+    for (const column of places) place = (Math.imul(place, 31) + column) | 0;
+    place = Math.imul(place, 31) | 0;
+  }
+  return place;
+}
+
+/** Sums of the same edges differ by rounding alone. */
+const SAME_FRACTION = 1e-12;
+
+function isSame(a: CoverageRow, b: CoverageRow): boolean {
+  const isNear = (own: Float64Array, other: Float64Array): boolean =>
+    own.every((value, n) => Math.abs(value - other[n]!) <= SAME_FRACTION);
+  return a.columns.every(
+    (places, k) =>
+      places.length === b.columns[k]!.length &&
+      places.every((column, n) => column === b.columns[k]![n]) &&
+      isNear(a.area[k]!, b.area[k]!) &&
+      isNear(a.carry[k]!, b.carry[k]!),
+  );
 }
 
 type Cells = Map<number, Map<number, [area: number, carry: number]>>;
