@@ -103,9 +103,11 @@ import {
   return f32x4.splat(load<f32>(at + (<usize>index << 2)));
 }
 
-// Four cells of a plain span; returns the new u so that the next four find their left neighbour in a register.
+// Four cells without loss; returns the new u so that the next four find their left neighbour in a register. `unit` is for
+// links with b = 1 (empty square cells): times 1 is exact, so leaving it out changes no bit. Flags like this one are known at
+// compile time, so each use becomes a loop of its own.
 // @ts-ignore: decorator
-@inline function plainFour(u: usize, vx: usize, vy: usize, row: usize, bu: v128, bvx: v128, bvy: v128, left: v128): v128 {
+@inline function four(u: usize, vx: usize, vy: usize, row: usize, bu: v128, bvx: v128, bvy: v128, left: v128, unit: bool): v128 {
   const oldVx = v128.load(vx);
   const oldVy = v128.load(vy);
   const next = f32x4.add(
@@ -113,116 +115,96 @@ import {
     f32x4.mul(bu, f32x4.sub(f32x4.sub(v128.load(vy, 4), oldVy), f32x4.sub(v128.load(vx + row), oldVx))),
   );
   v128.store(u, next);
-  v128.store(vx, f32x4.sub(oldVx, f32x4.mul(bvx, f32x4.sub(next, v128.load(u - row)))));
-  v128.store(vy, f32x4.add(oldVy, f32x4.mul(bvy, f32x4.sub(next, v128.shuffle<f32>(left, next, 3, 4, 5, 6)))));
+  const riseY = f32x4.sub(next, v128.load(u - row));
+  const riseX = f32x4.sub(next, v128.shuffle<f32>(left, next, 3, 4, 5, 6));
+  v128.store(vx, f32x4.sub(oldVx, unit ? riseY : f32x4.mul(bvx, riseY)));
+  v128.store(vy, f32x4.add(oldVy, unit ? riseX : f32x4.mul(bvy, riseX)));
   return next;
+}
+
+// @ts-ignore: decorator
+@inline function scalarLoop(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, bu: v128, bvx: v128, bvy: v128, unit: bool): void {
+  let left = v128.load(u - 16);
+  let end = u + (bytes & ~63);
+  while (u < end) {
+    left = four(u, vx, vy, row, bu, bvx, bvy, left, unit);
+    left = four(u + 16, vx + 16, vy + 16, row, bu, bvx, bvy, left, unit);
+    left = four(u + 32, vx + 32, vy + 32, row, bu, bvx, bvy, left, unit);
+    left = four(u + 48, vx + 48, vy + 48, row, bu, bvx, bvy, left, unit);
+    u += 64;
+    vx += 64;
+    vy += 64;
+  }
+  end = u + (bytes & 63);
+  while (u < end) {
+    left = four(u, vx, vy, row, bu, bvx, bvy, left, unit);
+    u += 16;
+    vx += 16;
+    vy += 16;
+  }
+}
+
+// Arrays begin at c: bu where `nodes`, then bvx and bvy where `links`.
+// @ts-ignore: decorator
+@inline function arrayLoop(
+  u: usize,
+  vx: usize,
+  vy: usize,
+  row: usize,
+  bytes: usize,
+  c: usize,
+  bu: v128,
+  bvx: v128,
+  bvy: v128,
+  nodes: bool,
+  links: bool,
+  unit: bool,
+): void {
+  let left = v128.load(u - 16);
+  const end = u + bytes;
+  const cx: usize = nodes ? bytes : 0;
+  const cy = cx + bytes;
+  while (u < end) {
+    left = four(
+      u,
+      vx,
+      vy,
+      row,
+      nodes ? v128.load(c) : bu,
+      links ? v128.load(c + cx) : bvx,
+      links ? v128.load(c + cy) : bvy,
+      left,
+      unit,
+    );
+    u += 16;
+    vx += 16;
+    vy += 16;
+    c += 16;
+  }
 }
 
 function plainSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, bu: v128, bvx: v128, bvy: v128): void {
-  let left = v128.load(u - 16);
-  let end = u + (bytes & ~63);
-  while (u < end) {
-    left = plainFour(u, vx, vy, row, bu, bvx, bvy, left);
-    left = plainFour(u + 16, vx + 16, vy + 16, row, bu, bvx, bvy, left);
-    left = plainFour(u + 32, vx + 32, vy + 32, row, bu, bvx, bvy, left);
-    left = plainFour(u + 48, vx + 48, vy + 48, row, bu, bvx, bvy, left);
-    u += 64;
-    vx += 64;
-    vy += 64;
-  }
-  end = u + (bytes & 63);
-  while (u < end) {
-    left = plainFour(u, vx, vy, row, bu, bvx, bvy, left);
-    u += 16;
-    vx += 16;
-    vy += 16;
-  }
+  scalarLoop(u, vx, vy, row, bytes, bu, bvx, bvy, false);
 }
 
-// The same where the links have b = 1 (empty square cells): times 1 is exact, so leaving it out changes no bit.
-// @ts-ignore: decorator
-@inline function unitFour(u: usize, vx: usize, vy: usize, row: usize, bu: v128, left: v128): v128 {
-  const oldVx = v128.load(vx);
-  const oldVy = v128.load(vy);
-  const next = f32x4.add(
-    v128.load(u),
-    f32x4.mul(bu, f32x4.sub(f32x4.sub(v128.load(vy, 4), oldVy), f32x4.sub(v128.load(vx + row), oldVx))),
-  );
-  v128.store(u, next);
-  v128.store(vx, f32x4.sub(oldVx, f32x4.sub(next, v128.load(u - row))));
-  v128.store(vy, f32x4.add(oldVy, f32x4.sub(next, v128.shuffle<f32>(left, next, 3, 4, 5, 6))));
-  return next;
-}
-
-function unitSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, bu: v128): void {
-  let left = v128.load(u - 16);
-  let end = u + (bytes & ~63);
-  while (u < end) {
-    left = unitFour(u, vx, vy, row, bu, left);
-    left = unitFour(u + 16, vx + 16, vy + 16, row, bu, left);
-    left = unitFour(u + 32, vx + 32, vy + 32, row, bu, left);
-    left = unitFour(u + 48, vx + 48, vy + 48, row, bu, left);
-    u += 64;
-    vx += 64;
-    vy += 64;
-  }
-  end = u + (bytes & 63);
-  while (u < end) {
-    left = unitFour(u, vx, vy, row, bu, left);
-    u += 16;
-    vx += 16;
-    vy += 16;
-  }
+function unitPlainSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, bu: v128): void {
+  scalarLoop(u, vx, vy, row, bytes, bu, bu, bu, true);
 }
 
 function nodesSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize, bvx: v128, bvy: v128): void {
-  let left = v128.load(u - 16);
-  const end = u + bytes;
-  while (u < end) {
-    left = plainFour(u, vx, vy, row, v128.load(c), bvx, bvy, left);
-    u += 16;
-    vx += 16;
-    vy += 16;
-    c += 16;
-  }
+  arrayLoop(u, vx, vy, row, bytes, c, bvx, bvx, bvy, true, false, false);
 }
 
-function unitNodesSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize): void {
-  let left = v128.load(u - 16);
-  const end = u + bytes;
-  while (u < end) {
-    left = unitFour(u, vx, vy, row, v128.load(c), left);
-    u += 16;
-    vx += 16;
-    vy += 16;
-    c += 16;
-  }
+function unitNodesSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize, bu: v128): void {
+  arrayLoop(u, vx, vy, row, bytes, c, bu, bu, bu, true, false, true);
 }
 
-function linksSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, bu: v128, c: usize): void {
-  let left = v128.load(u - 16);
-  const end = u + bytes;
-  while (u < end) {
-    left = plainFour(u, vx, vy, row, bu, v128.load(c), v128.load(c + bytes), left);
-    u += 16;
-    vx += 16;
-    vy += 16;
-    c += 16;
-  }
+function linksSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize, bu: v128): void {
+  arrayLoop(u, vx, vy, row, bytes, c, bu, bu, bu, false, true, false);
 }
 
-function losslessSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize): void {
-  let left = v128.load(u - 16);
-  const end = u + bytes;
-  const cx = bytes;
-  const cy = bytes << 1;
-  while (u < end) {
-    left = plainFour(u, vx, vy, row, v128.load(c), v128.load(c + cx), v128.load(c + cy), left);
-    u += 16;
-    vx += 16;
-    vy += 16;
-    c += 16;
-  }
+function losslessSpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize, bu: v128): void {
+  arrayLoop(u, vx, vy, row, bytes, c, bu, bu, bu, true, true, false);
 }
 
 function lossySpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: usize): void {
@@ -256,8 +238,7 @@ function lossySpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: 
   }
 }
 
-// A span in an absorber without drive terms, in one pass: the same operations a cell as the pass by pass below. The three
-// flags are known at compile time, so each call becomes a loop of its own.
+// A span in an absorber without drive terms, in one pass: the same operations a cell as the pass by pass below.
 // @ts-ignore: decorator
 @inline function absorbingSpan(span: usize, base: usize, u: usize, vx: usize, vy: usize, row: usize, inX: bool, inY: bool, lossy: bool): void {
   const n = <usize>word(span, SPAN_COUNT) << 2;
@@ -441,13 +422,13 @@ function workedSpan(span: usize, base: usize, u0: usize, vx0: usize, vy0: usize,
   const bvy = splat(span, SPAN_BVY);
   const unit = single(span, SPAN_BVX) == 1 && single(span, SPAN_BVY) == 1;
   if (kind == PLAIN) {
-    if (unit) unitSpan(u, vx, vy, row, bytes, bu);
+    if (unit) unitPlainSpan(u, vx, vy, row, bytes, bu);
     else plainSpan(u, vx, vy, row, bytes, bu, bvx, bvy);
   } else if (kind == NODES) {
-    if (unit) unitNodesSpan(u, vx, vy, row, bytes, c);
+    if (unit) unitNodesSpan(u, vx, vy, row, bytes, c, bu);
     else nodesSpan(u, vx, vy, row, bytes, c, bvx, bvy);
-  } else if (kind == LINKS) linksSpan(u, vx, vy, row, bytes, bu, c);
-  else if (kind == LOSSLESS) losslessSpan(u, vx, vy, row, bytes, c);
+  } else if (kind == LINKS) linksSpan(u, vx, vy, row, bytes, c, bu);
+  else if (kind == LOSSLESS) losslessSpan(u, vx, vy, row, bytes, c, bu);
   else lossySpan(u, vx, vy, row, bytes, c);
 }
 
