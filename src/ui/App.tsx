@@ -10,6 +10,7 @@ import { Notices } from './shell/Notices.tsx';
 import type { SplitterSpec } from './shell/Splitter.tsx';
 import { Splitter } from './shell/Splitter.tsx';
 import { useDrop } from './shell/use-drop.ts';
+import { usePartClipboard } from './shell/use-part-clipboard.ts';
 import { useExamples } from './shell/use-examples.ts';
 import { useMedia } from './shell/use-media.ts';
 import { useShortcuts } from './shell/use-shortcuts.ts';
@@ -25,6 +26,7 @@ export function App() {
   const narrow = useMedia('(max-width: 899px)');
   const examples = useExamples();
   const dropping = useDrop();
+  usePartClipboard();
   useShortcuts();
   // Before the paint, so that a dark bench never flashes light.
   useLayoutEffect(() => {

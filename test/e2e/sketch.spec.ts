@@ -208,3 +208,33 @@ test('a tool chosen by its command takes digits at once, and a corner is added a
   await page.getByRole('menuitem', { name: 'take this corner away' }).click();
   expect(await points()).toBe(2);
 });
+
+test('rows of a spreadsheet paste as parts, in one undo step, and selected parts copy as such rows', async ({ bench, page }) => {
+  await bench.waitForEnd();
+  await bench.startEmptyJob();
+  const rows = 'kind\tmaterial\tx\ty\tradius\ndisc\tair\t30\t20\t4\ndisc\tair\t60\t20\t4\nwall\taluminium\t2\t90\t0\t90\t90';
+  const paste = (text: string): Promise<void> =>
+    page.evaluate((pasted) => {
+      const clipboardData = new DataTransfer();
+      clipboardData.setData('text/plain', pasted);
+      document.body.dispatchEvent(new ClipboardEvent('paste', { clipboardData, bubbles: true, cancelable: true }));
+    }, text);
+  await paste(rows);
+  await expect(page.getByText('3 parts are pasted.')).toBeVisible();
+  expect((await savedJob(bench)).job.parts).toHaveLength(3);
+  const copied = await page.evaluate(() => {
+    const clipboardData = new DataTransfer();
+    document.body.dispatchEvent(new ClipboardEvent('copy', { clipboardData, bubbles: true, cancelable: true }));
+    return clipboardData.getData('text/plain');
+  });
+  expect(copied.split('\n')).toEqual([
+    'disc\tair\t30 mm\t20 mm\t4 mm',
+    'disc\tair\t60 mm\t20 mm\t4 mm',
+    'wall\taluminium\t2 mm\t90 mm\t0 mm\t90 mm\t90 mm',
+  ]);
+  await page.getByRole('button', { name: 'Undo', exact: true }).click();
+  expect((await savedJob(bench)).job.parts).toHaveLength(0);
+  await paste('disc\tair\t30\t20');
+  await expect(page.getByRole('alert')).toContainText('row 1');
+  expect((await savedJob(bench)).job.parts).toHaveLength(0);
+});

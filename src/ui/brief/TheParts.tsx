@@ -60,7 +60,8 @@ function AddParts() {
         <AddLink label="own material" onAdd={addOwnMaterial} />
       </AddLinks>
       <p className="soft hint">
-        New parts are of <MaterialChoice label="Material of new parts" value={paint} after="." onChoose={setPaint} />
+        New parts are of <MaterialChoice label="Material of new parts" value={paint} after="." onChoose={setPaint} /> Rows of a
+        spreadsheet paste as parts: kind, material, lengths.
       </p>
     </>
   );
