@@ -2,7 +2,8 @@
 // Must not know workers, messages, clocks or pages.
 import type { Result } from '../src/base/result.ts';
 import { fail, ok } from '../src/base/result.ts';
-import { SYNC_READY } from '../src/engine/layout.ts';
+import type { RowSampling } from '../src/engine/frame.ts';
+import { PICTURE_MOST, PICTURE_ROW, SYNC_READY } from '../src/engine/layout.ts';
 import { feedInto } from '../src/engine/plane-wave.ts';
 import type { RunPlan } from '../src/engine/plan.ts';
 import { PhasorTable, RunningDft } from '../src/engine/spectrum.ts';
@@ -14,6 +15,17 @@ interface KernelExports {
   advance(base: number, steps: number): void;
   energy(base: number): number;
   dismiss(): void;
+  samplePairs(out: number, a: number, b: number, count: number, scale: number): number;
+  sampleMagnitudes(
+    out: number,
+    a: number,
+    b: number,
+    c: number,
+    d: number,
+    count: number,
+    scaleX: number,
+    scaleY: number,
+  ): number;
 }
 
 const PAGE = 65536;
@@ -44,10 +56,36 @@ export function openRun(plan: RunPlan, kernel: WebAssembly.Module, pool: ThreadP
   return ok(new Run(plan, memory.buffer, instance.exports as unknown as KernelExports));
 }
 
+function rowsOf(kernel: KernelExports, buffer: ArrayBufferLike): RowSampling {
+  const row = new Float32Array(buffer, PICTURE_ROW, PICTURE_MOST);
+  const place = (first: number): number => BASE + 4 * first;
+  return {
+    most: PICTURE_MOST - 4,
+    pairs(values, at, count, first, apart, scale) {
+      const peak = kernel.samplePairs(PICTURE_ROW, place(first), place(first + apart), count, scale);
+      values.set(row.subarray(0, count), at);
+      return peak;
+    },
+    magnitudes(values, at, count, x, y, [toX, toY]) {
+      const [a, b, c, d] = [x.first, x.first + x.apart, y.first, y.first + y.apart].map(place) as [
+        number,
+        number,
+        number,
+        number,
+      ];
+      const peak = kernel.sampleMagnitudes(PICTURE_ROW, a, b, c, d, count, toX, toY);
+      values.set(row.subarray(0, count), at);
+      return peak;
+    },
+  };
+}
+
 export class Run {
   readonly plan: RunPlan;
   /** The whole image as float32, offset 0 being its start. */
   readonly image: Float32Array;
+  /** Rows of pictures, sampled by the kernel. */
+  readonly rows: RowSampling;
   /** Steps done. u stands at step * dt, in-plane fields half a step later. */
   step = 0;
   /** Samples per channel, index n at time n * dt; in-plane channels aligned to u by the mean of the half steps round it. */
@@ -63,6 +101,7 @@ export class Run {
     this.kernel = kernel;
     this.buffer = buffer;
     this.image = new Float32Array(buffer, BASE, Math.floor(plan.imageBytes / 4));
+    this.rows = rowsOf(kernel, buffer);
     this.traces = [];
     this.phasors = new PhasorTable(plan.frequenciesHertz, plan.dtSeconds);
     this.dft = new RunningDft(

@@ -339,6 +339,14 @@ function quantityOf(view: FieldView, section: 'E out of plane' | 'H out of plane
 
 function makeFrame(run: Run, view: FieldView, maxWidth: number, maxHeight: number): FieldFrame {
   const { plan } = run;
-  const sampled = sampleField(run.image, plan.fields, plan.section, quantityOf(view, plan.section), maxWidth, maxHeight);
+  const sampled = sampleField(
+    run.image,
+    plan.fields,
+    plan.section,
+    quantityOf(view, plan.section),
+    maxWidth,
+    maxHeight,
+    run.rows,
+  );
   return { view, ...sampled, step: run.step, timeSeconds: run.step * plan.dtSeconds };
 }

@@ -12,9 +12,27 @@ export interface SampledField {
   readonly peak: number;
 }
 
+/** Rows of neighbouring unknowns, sampled faster than by the loops here. Places count floats from the start of the image. */
+export interface RowSampling {
+  /** Most samples in a row. */
+  readonly most: number;
+  /** scale * (m[first + k] + m[first + apart + k]) into `values`; returns the largest magnitude. */
+  pairs(values: Float32Array, at: number, count: number, first: number, apart: number, scale: number): number;
+  /** The length of the vector of two such sums, `scales` being those of x and y. */
+  magnitudes(
+    values: Float32Array,
+    at: number,
+    count: number,
+    x: { readonly first: number; readonly apart: number },
+    y: { readonly first: number; readonly apart: number },
+    scales: readonly [x: number, y: number],
+  ): number;
+}
+
 /**
  * Samples the sheet at every n-th unknown so that the picture is at most `maxWidth` by `maxHeight`. In-plane components are
- * brought to u by the mean of their two neighbours. `memory` views the run's image, offset 0 being its start.
+ * brought to u by the mean of their two neighbours. `memory` views the run's image, offset 0 being its start; `rows` is used
+ * where no column is left out.
  */
 export function sampleField(
   memory: Float32Array,
@@ -23,19 +41,23 @@ export function sampleField(
   quantity: FrameQuantity,
   maxWidth: number,
   maxHeight: number,
+  rows: RowSampling | null = null,
 ): SampledField {
   const columns = geometry.lastColumn - geometry.firstColumn + 1;
-  const rows = geometry.lastRow - geometry.firstRow + 1;
+  const rowCount = geometry.lastRow - geometry.firstRow + 1;
   const stepX = Math.max(1, Math.ceil(columns / maxWidth));
-  const stepY = Math.max(1, Math.ceil(rows / maxHeight));
+  const stepY = Math.max(1, Math.ceil(rowCount / maxHeight));
   const width = Math.ceil(columns / stepX);
-  const height = Math.ceil(rows / stepY);
+  const height = Math.ceil(rowCount / stepY);
   const values = new Float32Array(width * height);
   const columnOf = Int32Array.from(
     { length: width },
     (_, a) => 4 + Math.min(geometry.lastColumn, geometry.firstColumn + a * stepX + (stepX >> 1)),
   );
-  const sampleRow = rowSampler(memory, geometry, section, quantity, columnOf);
+  const sampleRow =
+    rows !== null && stepX === 1 && width <= rows.most
+      ? wholeRowSampler(rows, geometry, section, quantity, width)
+      : rowSampler(memory, geometry, section, quantity, columnOf);
   let peak = 0;
   for (let b = 0; b < height; b++) {
     const row = Math.min(geometry.lastRow, geometry.firstRow + b * stepY + (stepY >> 1)) + 1;
@@ -47,6 +69,46 @@ export function sampleField(
 /** Writes one row of samples and returns its largest magnitude. One tight loop a quantity: 30 pictures a second must cost little. */
 type RowSampler = (values: Float32Array, at: number, rowStart: number) => number;
 
+/** Half of what brings a sum of two in-plane unknowns to physical units. */
+function halfScales(geometry: FieldGeometry, section: 'E out of plane' | 'H out of plane'): [toX: number, toY: number] {
+  const sign = section === 'E out of plane' ? 0.5 : -0.5;
+  return [sign / (geometry.vScale * geometry.dxMetres), sign / (geometry.vScale * geometry.dyMetres)];
+}
+
+function wholeRowSampler(
+  rows: RowSampling,
+  geometry: FieldGeometry,
+  section: 'E out of plane' | 'H out of plane',
+  quantity: FrameQuantity,
+  count: number,
+): RowSampler {
+  const { stride } = geometry;
+  const [toX, toY] = halfScales(geometry, section);
+  const first = 4 + geometry.firstColumn;
+  const [u, vx, vy] = [geometry.uOffset, geometry.vxOffset, geometry.vyOffset].map((offset) => (offset >> 2) + first) as [
+    number,
+    number,
+    number,
+  ];
+  const toU = 0.5 / geometry.uScale;
+  switch (quantity) {
+    case 'u':
+      return (values, at, start) => rows.pairs(values, at, count, u + start, 0, toU);
+    case 'x':
+      return (values, at, start) => rows.pairs(values, at, count, vx + start, stride, toX);
+    case 'y':
+      return (values, at, start) => rows.pairs(values, at, count, vy + start, 1, toY);
+    case 'u magnitude':
+      return (values, at, start) => {
+        const own = { first: u + start, apart: 0 };
+        return rows.magnitudes(values, at, count, own, own, [toU, 0]);
+      };
+    case 'in-plane magnitude':
+      return (values, at, start) =>
+        rows.magnitudes(values, at, count, { first: vx + start, apart: stride }, { first: vy + start, apart: 1 }, [toX, toY]);
+  }
+}
+
 function rowSampler(
   memory: Float32Array,
   geometry: FieldGeometry,
@@ -55,9 +117,7 @@ function rowSampler(
   columnOf: Int32Array,
 ): RowSampler {
   const { stride } = geometry;
-  const sign = section === 'E out of plane' ? 0.5 : -0.5;
-  const toX = sign / (geometry.vScale * geometry.dxMetres);
-  const toY = sign / (geometry.vScale * geometry.dyMetres);
+  const [toX, toY] = halfScales(geometry, section);
   const count = columnOf.length;
   switch (quantity) {
     case 'u':

@@ -20,6 +20,10 @@ export const H_BLOCK = 14; // steps that follow each other down the rows while t
 export const H_BUFFERS = 15; // sets of levels of the incident lines: 1, or one more than the threads that work on blocks at once
 export const HEADER_WORDS = 16;
 
+// A row of a picture, in bytes from the start of the memory: float32.
+export const PICTURE_ROW = 4096;
+export const PICTURE_MOST = 7000; // samples in a row
+
 // Words by which threads keep in step, in bytes from the start of the memory (below the image, so that clearing it leaves
 // them), each in a cache line of its own.
 export const SYNC_READY = 32768; // int32: helpers that serve

@@ -186,3 +186,4 @@ export function dismiss(): void {
 }
 
 export { energy } from './energy';
+export { sampleMagnitudes, samplePairs } from './pictures';
