@@ -180,13 +180,14 @@ function lossySpan(u: usize, vx: usize, vy: usize, row: usize, bytes: usize, c: 
   const n = <usize>word(span, SPAN_COUNT) << 2;
   const end = u + n;
   let c = base + offset(span, SPAN_COEFFICIENTS);
-  let x = base + offset(span, SPAN_ABSORB_X);
-  let psiX = base + offset(span, SPAN_PSI_X);
-  let psiY = base + offset(span, SPAN_PSI_Y);
-  const ybu = splat(span, SPAN_Y_BU);
-  const ycu = splat(span, SPAN_Y_CU);
-  const ybv = splat(span, SPAN_Y_BV);
-  const ycv = splat(span, SPAN_Y_CV);
+  let x = inX ? base + offset(span, SPAN_ABSORB_X) : 0;
+  let psiX = inX ? base + offset(span, SPAN_PSI_X) : 0;
+  let psiY = inY ? base + offset(span, SPAN_PSI_Y) : 0;
+  // The compiler keeps loads that nothing reads, so those of an axis that is not absorbed are left out by hand.
+  const ybu = inY ? splat(span, SPAN_Y_BU) : f32x4.splat(0);
+  const ycu = inY ? splat(span, SPAN_Y_CU) : f32x4.splat(0);
+  const ybv = inY ? splat(span, SPAN_Y_BV) : f32x4.splat(0);
+  const ycv = inY ? splat(span, SPAN_Y_CV) : f32x4.splat(0);
   let left = v128.load(u - 16);
   while (u < end) {
     const oldVx = v128.load(vx);
