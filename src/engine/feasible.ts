@@ -2,6 +2,7 @@
 // Must not know how the image is written.
 import { fail, ok, type Result } from '../base/result.ts';
 import type { ResolvedJob, XY } from '../model/job.ts';
+import { outlineBounds } from '../model/outline.ts';
 import type { Grid } from './grid.ts';
 import { align, rowStride } from './image.ts';
 import { HEADER_WORDS, MOST_THREADS, SPAN_WORDS } from './layout.ts';
@@ -104,8 +105,8 @@ function coefficientBytes(grid: Grid, job: ResolvedJob, stride: number): number 
   let ownRows = y.before + y.after + 4;
   let corners = 0;
   for (const part of job.parts) {
-    const ys = part.outline.flatMap((ring) => ring.map((at) => at[1]));
-    const tall = Math.ceil((Math.max(...ys) - Math.min(...ys)) / grid.dyMetres);
+    const { bottom, top } = outlineBounds(part.outline);
+    const tall = Math.ceil((top - bottom) / grid.dyMetres);
     // Of an upright rectangle only the rows at its upper and lower side differ, and those between from those without it.
     ownRows += isUpright(part.outline) ? 10 : tall + 4;
     corners += part.outline.reduce((sum, ring) => sum + ring.length, 0);
