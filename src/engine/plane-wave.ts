@@ -5,6 +5,7 @@
 import { C0, ETA0 } from '../base/constants.ts';
 import { fail, ok, type Result } from '../base/result.ts';
 import type { EdgeName, ResolvedDrive, ResolvedJob } from '../model/job.ts';
+import { outlineBounds } from '../model/outline.ts';
 import { kernelScales } from './coefficients.ts';
 import type { Grid } from './grid.ts';
 import { constantsOf } from './media.ts';
@@ -127,9 +128,8 @@ function fullHeightLaunch(
   const origin = job.sheet.originMetres[horizontal ? 0 : 1];
   for (const part of job.parts) {
     // Bands of a part count by its whole extent along the wave: the launch needs bare background before the first part.
-    const along = part.outline.flat().map((point) => point[horizontal ? 0 : 1] + origin);
-    const from = Math.min(...along);
-    const to = Math.max(...along);
+    const { left, right, bottom, top } = outlineBounds(part.outline);
+    const [from, to] = horizontal ? [left + origin, right + origin] : [bottom + origin, top + origin];
     if (low ? from < line + CLEARANCE * spacing : to > line - CLEARANCE * spacing) {
       return refuse(
         `${part.name} stands where the wave is launched, ${BOX_INSET} cells inside the ${entering} edge.`,
