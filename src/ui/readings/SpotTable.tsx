@@ -28,7 +28,7 @@ export function SpotTable({ runs, choice }: { readonly runs: readonly DrawnRun[]
           <tr>
             <th scope="col">at</th>
             {curves.map((curve) => (
-              <th key={curve.id} scope="col">
+              <th key={curve.id} scope="col" title={curve.name}>
                 {curve.name}
               </th>
             ))}
