@@ -1,11 +1,14 @@
 // One thread against several on the same shared memory: equal bits in fields and records, whatever the row holds.
 import { readFileSync } from 'node:fs';
-import { afterEach, describe, expect, test } from 'vitest';
+import { afterEach, describe, expect, test, vi } from 'vitest';
 import { makePlan } from '../../src/engine/plan.ts';
 import type { ResolvedJob } from '../../src/model/job.ts';
 import { openRun, type Run } from '../../workers/run.ts';
 import { makeThreadPool } from '../../workers/thread-pool.node.ts';
 import { AIR, edges, METAL, part, rectangle, regularPolygon, resolvedJob } from '../helpers/resolved-jobs.ts';
+
+// Threads may take their time to start on a busy machine.
+vi.setConfig({ testTimeout: 60_000 });
 
 const kernels = { single: new WebAssembly.Module(read('kernel')), shared: new WebAssembly.Module(read('kernel-shared')) };
 
@@ -28,7 +31,7 @@ async function open(job: ResolvedJob, threads: number): Promise<Run> {
 }
 
 async function joined(run: Run, threads: number): Promise<void> {
-  for (let k = 0; k < 500 && run.threads < threads; k++) await new Promise((resolve) => setTimeout(resolve, 10));
+  for (let k = 0; k < 3000 && run.threads < threads; k++) await new Promise((resolve) => setTimeout(resolve, 10));
   expect(run.threads).toBe(threads);
 }
 
